@@ -1,0 +1,1 @@
+export { cancelJob, jobEvents, jobFor, presentJob } from './jobs.server';

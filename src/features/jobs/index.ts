@@ -1,0 +1,1 @@
+export { acceptedSchema, jobOperations, jobSchema, type JobView } from './jobs';

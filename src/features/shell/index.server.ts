@@ -1,0 +1,1 @@
+export { openPlace, type OpenPlace, type PlaceRequest } from './shell.server';

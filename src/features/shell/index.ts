@@ -1,0 +1,1 @@
+export { initials, placeHref, PLACES, type NavItem, type Place, type ShellData } from './shell';

@@ -1,0 +1,1 @@
+export { abilities, ACTIONS, can, mayGrant, seesNames, type Action } from './policy';

@@ -1,0 +1,3 @@
+export { serve, type Call } from './serve';
+export { problemResponse } from './problems';
+export { validate } from './input';

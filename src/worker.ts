@@ -1,0 +1,33 @@
+import { config } from '@/server/config';
+import { log } from '@/server/log';
+import { sendMail } from '@/server/mail';
+import { startWorker, type JobRegistry } from '@/server/queue';
+import { ensureBucket } from '@/server/storage';
+
+/** Every kind of job there is: one explicit list, handlers loaded when first needed. */
+const registry: JobRegistry = {
+  mail: { load: () => Promise.resolve(sendMail) },
+};
+
+config();
+await ensureBucket();
+const worker = await startWorker(registry);
+log.info('worker is ready');
+
+let ending = false;
+const end = async (code: number): Promise<void> => {
+  if (ending) return;
+  ending = true;
+  await worker.stop().catch(() => undefined);
+  process.exit(code);
+};
+process.on('SIGINT', () => void end(0));
+process.on('SIGTERM', () => void end(0));
+// The queue gave up, as when the database stays away: end, and let the supervisor start afresh.
+worker.done.then(
+  () => void end(ending ? 0 : 1),
+  (err: unknown) => {
+    log.error({ err }, 'worker stopped');
+    void end(1);
+  },
+);

@@ -1,0 +1,4 @@
+export { memberCode } from './codes.server';
+export { exportMembers } from './export.server';
+export { memberDetail } from './detail.server';
+export { memberRows } from './rows.server';

@@ -1,0 +1,1 @@
+export { memberOperations, type MemberRow, type MembersPage, type MembersQuery } from './members';

@@ -1,0 +1,14 @@
+export {
+  colourSchema,
+  fieldSchema,
+  fieldsOf,
+  filterSchema,
+  filtersSchema,
+  stateFromQuery,
+  stateToQuery,
+  viewStateSchema,
+  type Colour,
+  type Filter,
+  type ViewState,
+} from './state';
+export { viewOperations, type Comment, type SavedView, type Share } from './views';

@@ -43,7 +43,7 @@ export const analysis: Migration = {
       priority text NOT NULL DEFAULT 'normal' CHECK (priority IN ('low', 'normal', 'high')), due_on date,
       decision text CHECK (decision IN ('no-concern', 'keep-watching', 'reach-out', 'escalate', 'data-error')),
       reason text, evidence jsonb NOT NULL, version integer NOT NULL DEFAULT 1, opened_by text,
-      created_at timestamptz NOT NULL DEFAULT now(), decided_at timestamptz, decided_by text,
+      created_at timestamptz NOT NULL DEFAULT now(), decided_at timestamptz, decided_by text, escalation_by text,
       UNIQUE (workspace_id, number), UNIQUE (reading_id, member_id), CHECK (decision IS NULL OR reason IS NOT NULL));
     CREATE INDEX cases_community ON cases (community_id, state);
     CREATE TABLE case_events (

@@ -41,6 +41,8 @@ export class Case extends Model<InferAttributes<Case>, InferCreationAttributes<C
   declare createdAt: CreationOptional<Date>;
   declare decidedAt: CreationOptional<Date | null>;
   declare decidedBy: CreationOptional<string | null>;
+  /** Who proposed to escalate; a second person confirms. */
+  declare escalationBy: CreationOptional<string | null>;
 }
 Case.init(
   {
@@ -64,6 +66,7 @@ Case.init(
     createdAt: time,
     decidedAt: optionalTime,
     decidedBy: optionalText,
+    escalationBy: optionalText,
   },
   { sequelize, tableName: 'cases' },
 );

@@ -1,0 +1,4 @@
+export { getCase } from './case.server';
+export { listCases } from './list.server';
+export { openCases } from './open.server';
+export { addNote, changeCase, decideCase, reopenCase } from './work.server';

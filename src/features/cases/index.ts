@@ -1,0 +1,8 @@
+export {
+  caseOperations,
+  DECISIONS,
+  type CaseDetail,
+  type CasesPreview,
+  type CaseView,
+  type Decision,
+} from './cases';

@@ -1,3 +1,4 @@
+export { matchingMembers, memberColumn, memberHandles } from './columns.server';
 export { memberCode } from './codes.server';
 export { exportMembers } from './export.server';
 export { memberDetail } from './detail.server';

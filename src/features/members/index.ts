@@ -1,1 +1,7 @@
-export { memberOperations, type MemberRow, type MembersPage, type MembersQuery } from './members';
+export {
+  memberOperations,
+  type MemberRow,
+  type Handles,
+  type MembersPage,
+  type MembersQuery,
+} from './members';

@@ -62,6 +62,11 @@ export const membersPageSchema = z.object({
 });
 export type MembersPage = z.infer<typeof membersPageSchema>;
 
+export const handlesSchema = z
+  .object({ ids: z.array(z.string()), names: z.array(z.string()) })
+  .meta({ id: 'Handles' });
+export type Handles = z.infer<typeof handlesSchema>;
+
 const params = z.object({ snapshot: idSchema });
 const shared = { tag: 'Members', access: 'person', params } as const;
 
@@ -105,5 +110,36 @@ export const memberOperations = {
     params: params.extend({ member: idSchema }),
     query: membersQuerySchema.pick({ columns: true, view: true }),
     status: 200,
+  }),
+  values: operation({
+    ...shared,
+    id: 'getValues',
+    method: 'get',
+    path: '/api/v1/snapshots/{snapshot}/values',
+    summary:
+      'One field of every member, in member order: little-endian 64-bit floats, NaN where there is none. Labels are numbered by `x-labels`, a JSON array.',
+    query: z.object({ field: fieldSchema, view: idSchema.optional() }),
+    status: 200,
+    produces: 'application/octet-stream',
+  }),
+  handles: operation({
+    ...shared,
+    id: 'getHandles',
+    method: 'get',
+    path: '/api/v1/snapshots/{snapshot}/handles',
+    summary: 'Ids and names (or codes, where names are hidden) of every member, in member order',
+    query: z.object({ view: idSchema.optional() }),
+    status: 200,
+    response: handlesSchema,
+  }),
+  matching: operation({
+    ...shared,
+    id: 'getMatching',
+    method: 'get',
+    path: '/api/v1/snapshots/{snapshot}/matching',
+    summary: 'Which members pass the filters, in member order: one byte each, 1 or 0',
+    query: z.object({ filter: jsonParameter(filtersSchema), view: idSchema.optional() }),
+    status: 200,
+    produces: 'application/octet-stream',
   }),
 };

@@ -1,11 +1,12 @@
 import { QueryTypes } from 'sequelize';
 import type { Actor } from '@/lib/actor';
 import { ProblemError } from '@/lib/problem';
-import { Grouping, sequelize } from '@/server/models';
+import { sequelize } from '@/server/models';
 import type { SharedSnapshot } from '@/features/views/index.server';
 import { memberCode } from './codes.server';
 import { Binds, resolveFields, type FieldSql } from './fields.server';
 import { filterFields, filterSql } from './filters.server';
+import { maskedGroups } from './masks.server';
 import type { MemberRow, MembersPage, MembersQuery } from './members';
 
 interface RawRow {
@@ -51,24 +52,6 @@ async function plan({ snapshot, access, through }: SharedSnapshot, query: Member
     order,
     from: `FROM snapshot_members m ${joins.join(' ')} WHERE m.snapshot_id = ${snapshotBind}${where.map((one) => ` AND ${one}`).join('')}`,
   };
-}
-
-/** Groups of the asked groupings that are too small to show to this role, as `field → indexes`. */
-async function maskedGroups(
-  { access, through }: SharedSnapshot,
-  columns: readonly string[],
-): Promise<Map<string, Set<number>>> {
-  const masked = new Map<string, Set<number>>();
-  if (!through) return masked;
-  for (const field of columns.filter((one) => one.startsWith('group:'))) {
-    const grouping = await Grouping.findByPk(field.slice(6));
-    const groups = (grouping?.result as { groups?: { index: number; size: number }[] } | null)?.groups ?? [];
-    const small = groups
-      .filter((group) => group.size < access.workspace.smallestGroup)
-      .map((group) => group.index);
-    masked.set(field, new Set(small));
-  }
-  return masked;
 }
 
 function presenter(

@@ -1,0 +1,20 @@
+import type { APIRoute } from 'astro';
+import { caseOperations } from '@/features/cases';
+import { jobOperations } from '@/features/jobs';
+import { memberOperations } from '@/features/members';
+import { viewOperations } from '@/features/views';
+import { openApiDocument } from '@/lib/openapi';
+import type { Operation } from '@/lib/operation';
+import { VERSION } from '@/lib/version';
+
+/** Every call of the API, in the order in which the document shows them. */
+const OPERATIONS = [memberOperations, viewOperations, caseOperations, jobOperations].flatMap((group) =>
+  Object.values(group),
+) as unknown as Operation[];
+
+let document: object | undefined;
+
+export const GET: APIRoute = () => {
+  document ??= openApiDocument(OPERATIONS, VERSION);
+  return Response.json(document, { headers: { 'cache-control': 'public, max-age=300' } });
+};

@@ -1,0 +1,14 @@
+import { memberOperations } from '@/features/members';
+import { matchingMembers } from '@/features/members/index.server';
+import { snapshotThroughView } from '@/features/views/index.server';
+import { serve } from '@/server/http';
+
+export const GET = serve(memberOperations.matching, async (actor, { params, query }) => {
+  const mask = await matchingMembers(
+    await snapshotThroughView(actor, params.snapshot, query.view),
+    query.filter,
+  );
+  return new Response(Buffer.from(mask.buffer), {
+    headers: { 'content-type': 'application/octet-stream', 'cache-control': 'private, no-cache' },
+  });
+});

@@ -9,7 +9,8 @@ export interface ChartTable {
 export interface ChartFrameProps {
   /** What the picture shows, with its main number: it is read in place of the picture. */
   label: string;
-  height: number;
+  /** In pixels; a function of the width when the content needs more room on a narrow screen. */
+  height: number | ((width: number) => number);
   /** Draws the inside of the SVG at the real width. */
   children: (width: number) => ReactNode;
   /** The same numbers as a table, behind "Show as table". */
@@ -22,9 +23,10 @@ export interface ChartFrameProps {
 /** A picture laid out at its real width, with an accessible name and, when given, its numbers as a table. */
 export function ChartFrame({ label, height, children, table, className, fallbackWidth }: ChartFrameProps) {
   const [ref, width] = useWidth<HTMLDivElement>(fallbackWidth);
+  const tall = typeof height === 'function' ? height(width) : height;
   return (
     <div className={`chart ${className ?? ''}`} ref={ref}>
-      <svg role="img" aria-label={label} width={width} height={height} viewBox={`0 0 ${width} ${height}`}>
+      <svg role="img" aria-label={label} width={width} height={tall} viewBox={`0 0 ${width} ${tall}`}>
         {children(width)}
       </svg>
       {table && <TableFallback label={label} table={table} />}

@@ -45,31 +45,21 @@ export function StripPlot(props: StripPlotProps) {
   const table: ChartTable | undefined = withTable
     ? { head: ['Neighbour', 'Value'], rows: neighbours.map((n) => [n.label, format(n.value)]) }
     : undefined;
-  // Levels at a typical width decide the height once, so that the page does not jump while it is resized.
-  const rough = scaleLinear()
-    .domain([...domain])
-    .range([0, 420]);
-  const levels =
-    1 +
-    Math.max(
-      0,
-      ...stackLevels(
-        neighbours.map((n) => rough(n.value)),
-        DOT * 2,
-      ),
-    );
-  const base = Math.max(106, TOP + levels * 12 + 24);
+  const scaleFor = (width: number) =>
+    scaleLinear()
+      .domain([...domain])
+      .range([26, width - 26])
+      .clamp(true);
+  const layout = (width: number) => {
+    const x = scaleFor(width);
+    const places = neighbours.map((n) => x(n.value));
+    const levels = stackLevels(places, DOT * 2 + 0.5);
+    return { x, levels, base: Math.max(106, TOP + 30 + Math.max(0, ...levels) * 12.5) };
+  };
   return (
-    <ChartFrame label={label} height={base + 28} table={table}>
+    <ChartFrame label={label} height={(width) => layout(width).base + 28} table={table}>
       {(width) => {
-        const x = scaleLinear()
-          .domain([...domain])
-          .range([26, width - 26])
-          .clamp(true);
-        const level = stackLevels(
-          neighbours.map((n) => x(n.value)),
-          DOT * 2 + 0.5,
-        );
+        const { x, levels: level, base } = layout(width);
         const room = Math.abs(x(value) - x(predicted));
         const line = Math.max(TOP + 44, base - 40);
         const anchor = x(value) < 80 ? 'start' : x(value) > width - 80 ? 'end' : 'middle';

@@ -14,8 +14,10 @@ export function ticksFor(
   format?: (value: number) => string,
 ): Tick[] {
   const scale = scaleLinear().domain([...domain]);
-  const wanted = Math.max(2, Math.floor(width / gap));
-  const values = scale.ticks(wanted);
+  let wanted = Math.max(2, Math.floor(width / gap));
+  let values = scale.ticks(wanted);
+  // d3 takes the count as a hint and may give nearly twice as many.
+  while (values.length > 3 && values.length > width / gap + 1) values = scale.ticks(--wanted);
   const step = values.length > 1 ? (values[1] ?? 0) - (values[0] ?? 0) : 1;
   const decimals = Math.max(0, Math.min(6, -Math.floor(Math.log10(step) + 1e-9)));
   return values.map((value) => ({

@@ -46,7 +46,7 @@ export function ConfirmDialog(props: ConfirmDialogProps) {
   };
   const actions = (
     <>
-      <Button kind="quiet" onClick={() => change(false)} disabled={pending}>
+      <Button kind="quiet" onClick={() => change(false)} disabled={pending} autoFocus>
         {cancelLabel}
       </Button>
       <Button

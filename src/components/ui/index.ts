@@ -35,6 +35,10 @@
  * Charts: '@/components/charts'. Classes for plain markup (src/styles): .row .col .sp .wrap .grow .small .micro .mut .ink2 .b .r .nw
  * .h1 .h2 .h3 .h4 .lead .fig .disp .vh .fi (filled-in score) .tbl (tables; td.r, tr.on, th > button.th-s) .tw (scroller with sticky head)
  * .ib .bar (figure with bar) .bulk .pgf .panel .sec .three .aud .kv .menu/.mi .pp/.sn (settings) .stitch (--gap) .card .note .st .chk .rad
+ * Page layouts, as in the mock-ups (src/styles/pages): Brief .br .hero .at .todo .lowr .side · Map .mapgrid .stage .tools .chips .canvas .zoom .walk
+ * .foot .hovc .glabel .ties .avrow .panel · Readings .rd .warp .three · Groups .gr .gcards .gcd .pf .bd · Imports .im .cmt .pvw .prob
+ * People .ppl .mx · Members .mem .hd1 .tb .tw .pgf .bulk .x1 · Cases .cs(.picked) .qu .qh .qi .det .two .dec .back .choice .aud
+ * App.astro: `bleed` for pages that fill the window (Map, Members, Cases).
  */
 export { Banner, type BannerProps, type BannerTone } from './Banner';
 export { Beam } from './Beam';

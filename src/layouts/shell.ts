@@ -39,8 +39,24 @@ function onKey(event: KeyboardEvent): void {
   }
 }
 
+/** Says that the connection is gone, and from when the page is. */
+function watchConnection(): void {
+  const note = document.querySelector<HTMLElement>('[data-offline]');
+  const since = note?.querySelector('[data-offline-since]');
+  if (!note || !since) return;
+  const loaded = new Date().toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });
+  const show = () => {
+    since.textContent = navigator.onLine ? '' : `Showing this page from ${loaded}.`;
+    note.hidden = navigator.onLine;
+  };
+  window.addEventListener('online', show);
+  window.addEventListener('offline', show);
+  show();
+}
+
 /** Starts listening; called once by the layout. */
 export function startShell(): void {
+  watchConnection();
   document.addEventListener('keydown', onKey);
   document.addEventListener('click', (event) => {
     for (const menu of openMenus()) {

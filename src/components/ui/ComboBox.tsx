@@ -36,8 +36,8 @@ export function ComboBox<T extends string>(props: ComboBoxProps<T>) {
       {...(onInputChange
         ? { items: [...options], inputValue, onInputChange }
         : { defaultItems: [...options] })}
-      selectedKey={props.value}
-      onSelectionChange={(key) => props.onChange(options.find((option) => option.id === key)?.id ?? null)}
+      value={props.value}
+      onChange={(key) => props.onChange(options.find((option) => option.id === key)?.id ?? null)}
       allowsEmptyCollection
       menuTrigger="focus"
       isDisabled={props.isDisabled}

@@ -65,8 +65,8 @@ export function Select<T extends string>(props: SelectProps<T>) {
   return (
     <AriaSelect
       className={props.className}
-      selectedKey={value}
-      onSelectionChange={(key) => {
+      value={value}
+      onChange={(key) => {
         const next = options.find((option) => option.id === key);
         if (next) onChange(next.id);
       }}

@@ -11,7 +11,7 @@ import type { Handles } from './members';
 
 export interface Column {
   /** One number a member, NaN where there is none; for labels their place in `labels`. */
-  readonly values: Float64Array;
+  readonly values: Float64Array<ArrayBuffer>;
   readonly labels: readonly string[] | null;
 }
 
@@ -51,7 +51,10 @@ export async function memberHandles(actor: Actor, shared: SharedSnapshot): Promi
 }
 
 /** 1 for every member who passes all filters, 0 for the rest, in member order. */
-export async function matchingMembers(shared: SharedSnapshot, asked: readonly Filter[]): Promise<Uint8Array> {
+export async function matchingMembers(
+  shared: SharedSnapshot,
+  asked: readonly Filter[],
+): Promise<Uint8Array<ArrayBuffer>> {
   const binds = new Binds();
   const filters = [...asked, ...(shared.through?.filters ?? [])];
   const fields = await resolveFields(

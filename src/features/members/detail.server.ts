@@ -3,15 +3,8 @@ import type { Actor } from '@/lib/actor';
 import { notFound } from '@/lib/problem';
 import { sequelize, SnapshotMember } from '@/server/models';
 import type { SharedSnapshot } from '@/features/views/index.server';
-import type { MemberRow, MembersQuery } from './members';
+import type { MemberDetail, MembersQuery } from './members';
 import { memberRows } from './rows.server';
-
-export interface MemberDetail {
-  readonly member: MemberRow;
-  readonly degree: number;
-  /** Tied members, strongest tie first. */
-  readonly neighbours: readonly (MemberRow & { weight: number; tieKind: string | null; count: number })[];
-}
 
 const MOST_NEIGHBOURS = 200;
 

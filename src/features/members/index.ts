@@ -1,5 +1,6 @@
 export {
   memberOperations,
+  type MemberDetail,
   type MemberRow,
   type Handles,
   type MembersPage,

@@ -55,6 +55,14 @@ export const memberRowSchema = z
   .meta({ id: 'MemberRow' });
 export type MemberRow = z.infer<typeof memberRowSchema>;
 
+/** One member and those tied to them, for the side panel of the Map. */
+export interface MemberDetail {
+  readonly member: MemberRow;
+  readonly degree: number;
+  /** Tied members, strongest tie first. */
+  readonly neighbours: readonly (MemberRow & { weight: number; tieKind: string | null; count: number })[];
+}
+
 export const membersPageSchema = z.object({
   items: z.array(memberRowSchema),
   total: z.int(),

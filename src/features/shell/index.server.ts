@@ -1,1 +1,2 @@
+export { pagePlace } from './page.server';
 export { openPlace, type OpenPlace, type PlaceRequest } from './shell.server';

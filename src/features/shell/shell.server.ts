@@ -149,7 +149,7 @@ async function navigation(
         key: place,
         label: LABELS[place],
         href: placeHref(access.workspace.id, community.id, place, snapshot?.id),
-        icon: place,
+        icon: place === 'views' ? 'bookmark' : place,
         ...(count === undefined ? {} : { count }),
         ...(place === 'cases' && open > 0 ? { badge: open } : {}),
         current: place === current,

@@ -1,3 +1,5 @@
+import type { IconName } from '@/components/ui';
+
 /** Places of the navigation, in order; `settings` and `imports` stand below the line. */
 export const PLACES = [
   'brief',
@@ -16,7 +18,7 @@ export interface NavItem {
   readonly key: Place;
   readonly label: string;
   readonly href: string;
-  readonly icon: Place;
+  readonly icon: IconName;
   readonly count?: number;
   /** A count that waits for this person. */
   readonly badge?: number;
@@ -28,10 +30,10 @@ export interface ShellData {
   readonly workspace: { id: string; name: string; initials: string };
   readonly person: { name: string; initials: string; email: string };
   readonly community?: { id: string; name: string };
-  readonly communities: readonly { id: string; name: string; href: string }[];
+  readonly communities: { id: string; name: string; href: string }[];
   readonly snapshot?: { id: string; label: string; takenOn: string; members: number; ties: number };
-  readonly snapshots: readonly { id: string; label: string; takenOn: string; href: string }[];
-  readonly nav: readonly NavItem[];
+  readonly snapshots: { id: string; label: string; takenOn: string; href: string }[];
+  readonly nav: NavItem[];
 }
 
 /** Address of a place of a community. */

@@ -12,3 +12,12 @@ export {
   type ViewState,
 } from './state';
 export { viewOperations, type Comment, type SavedView, type Share } from './views';
+export {
+  colourField,
+  colourTitle,
+  type ExploreAttribute,
+  type ExploreGroup,
+  type ExploreGrouping,
+  type ExploreProps,
+  type ExploreReading,
+} from './explore';

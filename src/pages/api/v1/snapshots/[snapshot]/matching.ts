@@ -8,7 +8,7 @@ export const GET = serve(memberOperations.matching, async (actor, { params, quer
     await snapshotThroughView(actor, params.snapshot, query.view),
     query.filter,
   );
-  return new Response(Buffer.from(mask.buffer), {
+  return new Response(mask, {
     headers: { 'content-type': 'application/octet-stream', 'cache-control': 'private, no-cache' },
   });
 });

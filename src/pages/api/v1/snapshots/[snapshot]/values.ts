@@ -6,7 +6,7 @@ import { serve } from '@/server/http';
 export const GET = serve(memberOperations.values, async (actor, { params, query }) => {
   const shared = await snapshotThroughView(actor, params.snapshot, query.view);
   const { values, labels } = await memberColumn(shared, query.field);
-  return new Response(Buffer.from(values.buffer), {
+  return new Response(values, {
     headers: {
       'content-type': 'application/octet-stream',
       'cache-control': 'private, no-cache',

@@ -1,0 +1,4 @@
+/** The door of the numerical core: pure functions over typed arrays, no input or output. */
+export * from './types';
+export { createRandom, type Random } from './random';
+export * from './network';

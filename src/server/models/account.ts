@@ -1,6 +1,6 @@
 import { Model, type CreationOptional, type InferAttributes, type InferCreationAttributes } from 'sequelize';
 import { sequelize } from '../database/connection';
-import { bool, optionalText, optionalTime, text, time } from './columns';
+import { columns, bool, optionalText, optionalTime, text, time } from './columns';
 
 export class User extends Model<InferAttributes<User>, InferCreationAttributes<User>> {
   declare id: string;
@@ -12,7 +12,7 @@ export class User extends Model<InferAttributes<User>, InferCreationAttributes<U
   declare updatedAt: CreationOptional<Date>;
 }
 User.init(
-  {
+  columns({
     id: { ...text, primaryKey: true },
     name: text,
     email: text,
@@ -20,7 +20,7 @@ User.init(
     image: optionalText,
     createdAt: time,
     updatedAt: time,
-  },
+  }),
   { sequelize, tableName: 'users' },
 );
 
@@ -35,7 +35,7 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
   declare updatedAt: CreationOptional<Date>;
 }
 Session.init(
-  {
+  columns({
     id: { ...text, primaryKey: true },
     token: text,
     userId: text,
@@ -44,7 +44,7 @@ Session.init(
     userAgent: optionalText,
     createdAt: time,
     updatedAt: time,
-  },
+  }),
   { sequelize, tableName: 'sessions' },
 );
 
@@ -64,7 +64,7 @@ export class Account extends Model<InferAttributes<Account>, InferCreationAttrib
   declare updatedAt: CreationOptional<Date>;
 }
 Account.init(
-  {
+  columns({
     id: { ...text, primaryKey: true },
     accountId: text,
     providerId: text,
@@ -78,7 +78,7 @@ Account.init(
     password: optionalText,
     createdAt: time,
     updatedAt: time,
-  },
+  }),
   { sequelize, tableName: 'accounts' },
 );
 
@@ -94,13 +94,13 @@ export class Verification extends Model<
   declare updatedAt: CreationOptional<Date>;
 }
 Verification.init(
-  {
+  columns({
     id: { ...text, primaryKey: true },
     identifier: text,
     value: text,
     expiresAt: time,
     createdAt: time,
     updatedAt: time,
-  },
+  }),
   { sequelize, tableName: 'verifications' },
 );

@@ -1,6 +1,7 @@
 import { Model, type CreationOptional, type InferAttributes, type InferCreationAttributes } from 'sequelize';
 import { sequelize } from '../database/connection';
 import {
+  columns,
   bool,
   id,
   integer,
@@ -35,7 +36,7 @@ export class Grouping extends Model<InferAttributes<Grouping>, InferCreationAttr
   declare finishedAt: CreationOptional<Date | null>;
 }
 Grouping.init(
-  {
+  columns({
     id,
     workspaceId: reference,
     communityId: reference,
@@ -53,7 +54,7 @@ Grouping.init(
     createdBy: optionalText,
     createdAt: time,
     finishedAt: optionalTime,
-  },
+  }),
   { sequelize, tableName: 'groupings' },
 );
 
@@ -67,12 +68,12 @@ export class GroupingMember extends Model<
   declare vector: CreationOptional<number | null>;
 }
 GroupingMember.init(
-  {
+  columns({
     groupingId: { ...reference, primaryKey: true },
     ordinal: { ...integer, primaryKey: true },
     groupIndex: optionalInteger,
     vector: optionalDouble,
-  },
+  }),
   { sequelize, tableName: 'grouping_members' },
 );
 
@@ -95,7 +96,7 @@ export class Reading extends Model<InferAttributes<Reading>, InferCreationAttrib
   declare finishedAt: CreationOptional<Date | null>;
 }
 Reading.init(
-  {
+  columns({
     id,
     workspaceId: reference,
     communityId: reference,
@@ -112,7 +113,7 @@ Reading.init(
     createdBy: optionalText,
     createdAt: time,
     finishedAt: optionalTime,
-  },
+  }),
   { sequelize, tableName: 'readings' },
 );
 
@@ -142,7 +143,7 @@ export class ReadingMember extends Model<
   declare quadrant: CreationOptional<'HH' | 'LL' | 'HL' | 'LH' | null>;
 }
 ReadingMember.init(
-  {
+  columns({
     readingId: { ...reference, primaryKey: true },
     ordinal: { ...integer, primaryKey: true },
     value: optionalDouble,
@@ -163,6 +164,6 @@ ReadingMember.init(
     localP: optionalDouble,
     localQ: optionalDouble,
     quadrant: optionalText,
-  },
+  }),
   { sequelize, tableName: 'reading_members' },
 );

@@ -4,7 +4,11 @@ import { v7 } from 'uuid';
 /** A new opaque id; version 7, so that ids sort by time of making. */
 export const newId = (): string => v7();
 
-/** Column definitions that most models share. */
+/** A copy of each definition: Sequelize writes the column name into what it is given. */
+export const columns = <T extends Record<string, object>>(definitions: T): T =>
+  Object.fromEntries(Object.entries(definitions).map(([name, definition]) => [name, { ...definition }])) as T;
+
+/** Column definitions that most models share; use them through `columns`. */
 export const id = { type: DataTypes.UUID, primaryKey: true, defaultValue: newId };
 export const text = { type: DataTypes.TEXT, allowNull: false };
 export const optionalText = { type: DataTypes.TEXT, allowNull: true };

@@ -1,6 +1,7 @@
 import { Model, type CreationOptional, type InferAttributes, type InferCreationAttributes } from 'sequelize';
 import { sequelize } from '../database/connection';
 import {
+  columns,
   bool,
   day,
   double,
@@ -33,13 +34,13 @@ export class Community extends Model<InferAttributes<Community>, InferCreationAt
   declare createdAt: CreationOptional<Date>;
 }
 Community.init(
-  {
+  columns({
     id,
     workspaceId: reference,
     name: text,
     createdBy: optionalText,
     createdAt: time,
-  },
+  }),
   { sequelize, tableName: 'communities' },
 );
 
@@ -60,7 +61,7 @@ export class Import extends Model<InferAttributes<Import>, InferCreationAttribut
   declare finishedAt: CreationOptional<Date | null>;
 }
 Import.init(
-  {
+  columns({
     id,
     workspaceId: reference,
     communityId: reference,
@@ -75,7 +76,7 @@ Import.init(
     createdBy: optionalText,
     createdAt: time,
     finishedAt: optionalTime,
-  },
+  }),
   { sequelize, tableName: 'imports' },
 );
 
@@ -92,7 +93,7 @@ export class ImportProblem extends Model<
   declare reason: string;
 }
 ImportProblem.init(
-  {
+  columns({
     importId: { ...reference, primaryKey: true },
     ordinal: { ...integer, primaryKey: true },
     file: text,
@@ -100,7 +101,7 @@ ImportProblem.init(
     column: optionalText,
     value: optionalText,
     reason: text,
-  },
+  }),
   { sequelize, tableName: 'import_problems' },
 );
 
@@ -122,7 +123,7 @@ export class Snapshot extends Model<InferAttributes<Snapshot>, InferCreationAttr
   declare createdAt: CreationOptional<Date>;
 }
 Snapshot.init(
-  {
+  columns({
     id,
     workspaceId: reference,
     communityId: reference,
@@ -138,7 +139,7 @@ Snapshot.init(
     isolated: integer,
     createdBy: optionalText,
     createdAt: time,
-  },
+  }),
   { sequelize, tableName: 'snapshots' },
 );
 
@@ -155,7 +156,7 @@ export class Attribute extends Model<InferAttributes<Attribute>, InferCreationAt
   declare countOf: CreationOptional<string | null>;
 }
 Attribute.init(
-  {
+  columns({
     id,
     snapshotId: reference,
     ordinal: integer,
@@ -166,6 +167,6 @@ Attribute.init(
     observed: integer,
     summary: json,
     countOf: optionalText,
-  },
+  }),
   { sequelize, tableName: 'attributes' },
 );

@@ -6,7 +6,7 @@ import {
   type InferCreationAttributes,
 } from 'sequelize';
 import { sequelize } from '../database/connection';
-import { double, id, integer, optionalDouble, optionalText, reference, text } from './columns';
+import { columns, double, id, integer, optionalDouble, optionalText, reference, text } from './columns';
 
 export class CommunityMember extends Model<
   InferAttributes<CommunityMember>,
@@ -17,11 +17,11 @@ export class CommunityMember extends Model<
   declare externalId: string;
 }
 CommunityMember.init(
-  {
+  columns({
     id,
     communityId: reference,
     externalId: text,
-  },
+  }),
   { sequelize, tableName: 'community_members' },
 );
 
@@ -41,7 +41,7 @@ export class SnapshotMember extends Model<
   declare y: number;
 }
 SnapshotMember.init(
-  {
+  columns({
     snapshotId: { ...reference, primaryKey: true },
     ordinal: { ...integer, primaryKey: true },
     memberId: reference,
@@ -52,7 +52,7 @@ SnapshotMember.init(
     strength: double,
     x: double,
     y: double,
-  },
+  }),
   { sequelize, tableName: 'snapshot_members' },
 );
 
@@ -65,14 +65,14 @@ export class Tie extends Model<InferAttributes<Tie>, InferCreationAttributes<Tie
   declare count: number;
 }
 Tie.init(
-  {
+  columns({
     snapshotId: { ...reference, primaryKey: true },
     source: { ...integer, primaryKey: true },
     target: { ...integer, primaryKey: true },
     weight: double,
     kind: optionalText,
     count: integer,
-  },
+  }),
   { sequelize, tableName: 'ties' },
 );
 
@@ -86,12 +86,12 @@ export class AttributeValue extends Model<
   declare label: CreationOptional<string | null>;
 }
 AttributeValue.init(
-  {
+  columns({
     attributeId: { ...reference, primaryKey: true },
     ordinal: { ...integer, primaryKey: true },
     value: optionalDouble,
     label: optionalText,
-  },
+  }),
   { sequelize, tableName: 'attribute_values' },
 );
 
@@ -105,11 +105,11 @@ export class SnapshotArray extends Model<
   declare bytes: Buffer;
 }
 SnapshotArray.init(
-  {
+  columns({
     snapshotId: { ...reference, primaryKey: true },
     name: { ...text, primaryKey: true },
     type: text,
     bytes: { type: DataTypes.BLOB, allowNull: false },
-  },
+  }),
   { sequelize, tableName: 'snapshot_arrays' },
 );

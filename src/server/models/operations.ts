@@ -2,6 +2,7 @@ import { Model, type CreationOptional, type InferAttributes, type InferCreationA
 import type { ProblemDocument } from '@/lib/problem';
 import { sequelize } from '../database/connection';
 import {
+  columns,
   bool,
   double,
   id,
@@ -41,7 +42,7 @@ export class Job extends Model<InferAttributes<Job>, InferCreationAttributes<Job
   declare finishedAt: CreationOptional<Date | null>;
 }
 Job.init(
-  {
+  columns({
     id,
     workspaceId: optionalReference,
     kind: text,
@@ -59,7 +60,7 @@ Job.init(
     createdAt: time,
     startedAt: optionalTime,
     finishedAt: optionalTime,
-  },
+  }),
   { sequelize, tableName: 'jobs' },
 );
 
@@ -72,11 +73,11 @@ export class WorkerProcess extends Model<
   declare heartbeatAt: CreationOptional<Date>;
 }
 WorkerProcess.init(
-  {
+  columns({
     id: { ...text, primaryKey: true },
     startedAt: time,
     heartbeatAt: time,
-  },
+  }),
   { sequelize, tableName: 'worker_processes' },
 );
 
@@ -93,7 +94,7 @@ export class OutgoingMail extends Model<
   declare createdAt: CreationOptional<Date>;
 }
 OutgoingMail.init(
-  {
+  columns({
     id,
     to: { ...text, field: 'recipient' },
     subject: text,
@@ -101,6 +102,6 @@ OutgoingMail.init(
     html: text,
     sentAt: optionalTime,
     createdAt: time,
-  },
+  }),
   { sequelize, tableName: 'outgoing_mails' },
 );

@@ -8,6 +8,7 @@ import {
 import type { Role } from '@/lib/actor';
 import { sequelize } from '../database/connection';
 import {
+  columns,
   bool,
   id,
   integer,
@@ -45,7 +46,7 @@ export class Case extends Model<InferAttributes<Case>, InferCreationAttributes<C
   declare escalationBy: CreationOptional<string | null>;
 }
 Case.init(
-  {
+  columns({
     id,
     number: integer,
     workspaceId: reference,
@@ -67,7 +68,7 @@ Case.init(
     decidedAt: optionalTime,
     decidedBy: optionalText,
     escalationBy: optionalText,
-  },
+  }),
   { sequelize, tableName: 'cases' },
 );
 
@@ -81,7 +82,7 @@ export class CaseEvent extends Model<InferAttributes<CaseEvent>, InferCreationAt
   declare createdAt: CreationOptional<Date>;
 }
 CaseEvent.init(
-  {
+  columns({
     id,
     caseId: reference,
     workspaceId: reference,
@@ -89,7 +90,7 @@ CaseEvent.init(
     kind: text,
     body: json,
     createdAt: time,
-  },
+  }),
   { sequelize, tableName: 'case_events' },
 );
 
@@ -111,7 +112,7 @@ export class View extends Model<InferAttributes<View>, InferCreationAttributes<V
   declare updatedAt: CreationOptional<Date>;
 }
 View.init(
-  {
+  columns({
     id,
     workspaceId: reference,
     communityId: reference,
@@ -127,7 +128,7 @@ View.init(
     version: { ...integer, defaultValue: 1 },
     createdAt: time,
     updatedAt: time,
-  },
+  }),
   { sequelize, tableName: 'views' },
 );
 
@@ -141,7 +142,7 @@ export class ViewShare extends Model<InferAttributes<ViewShare>, InferCreationAt
   declare createdAt: CreationOptional<Date>;
 }
 ViewShare.init(
-  {
+  columns({
     id,
     viewId: reference,
     userId: optionalText,
@@ -149,7 +150,7 @@ ViewShare.init(
     canEdit: bool,
     createdBy: text,
     createdAt: time,
-  },
+  }),
   { sequelize, tableName: 'view_shares' },
 );
 
@@ -161,12 +162,12 @@ export class ViewComment extends Model<InferAttributes<ViewComment>, InferCreati
   declare createdAt: CreationOptional<Date>;
 }
 ViewComment.init(
-  {
+  columns({
     id,
     viewId: reference,
     authorId: text,
     body: text,
     createdAt: time,
-  },
+  }),
   { sequelize, tableName: 'view_comments' },
 );

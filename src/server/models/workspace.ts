@@ -1,7 +1,18 @@
 import { Model, type CreationOptional, type InferAttributes, type InferCreationAttributes } from 'sequelize';
 import type { Role } from '@/lib/actor';
 import { sequelize } from '../database/connection';
-import { bool, id, integer, json, optionalText, optionalTime, reference, text, time } from './columns';
+import {
+  columns,
+  bool,
+  id,
+  integer,
+  json,
+  optionalText,
+  optionalTime,
+  reference,
+  text,
+  time,
+} from './columns';
 
 export class Workspace extends Model<InferAttributes<Workspace>, InferCreationAttributes<Workspace>> {
   declare id: CreationOptional<string>;
@@ -13,7 +24,7 @@ export class Workspace extends Model<InferAttributes<Workspace>, InferCreationAt
   declare deletedAt: CreationOptional<Date | null>;
 }
 Workspace.init(
-  {
+  columns({
     id,
     name: text,
     viewersSeeNames: bool,
@@ -21,7 +32,7 @@ Workspace.init(
     neighbourFloor: { ...integer, defaultValue: 5 },
     createdAt: time,
     deletedAt: optionalTime,
-  },
+  }),
   { sequelize, tableName: 'workspaces' },
 );
 
@@ -34,14 +45,14 @@ export class Membership extends Model<InferAttributes<Membership>, InferCreation
   declare lastSeenAt: CreationOptional<Date | null>;
 }
 Membership.init(
-  {
+  columns({
     id,
     workspaceId: reference,
     userId: text,
     role: text,
     createdAt: time,
     lastSeenAt: optionalTime,
-  },
+  }),
   { sequelize, tableName: 'memberships' },
 );
 
@@ -58,7 +69,7 @@ export class Invitation extends Model<InferAttributes<Invitation>, InferCreation
   declare revokedAt: CreationOptional<Date | null>;
 }
 Invitation.init(
-  {
+  columns({
     id,
     workspaceId: reference,
     email: text,
@@ -69,7 +80,7 @@ Invitation.init(
     expiresAt: time,
     acceptedAt: optionalTime,
     revokedAt: optionalTime,
-  },
+  }),
   { sequelize, tableName: 'invitations' },
 );
 
@@ -86,7 +97,7 @@ export class ApiToken extends Model<InferAttributes<ApiToken>, InferCreationAttr
   declare revokedAt: CreationOptional<Date | null>;
 }
 ApiToken.init(
-  {
+  columns({
     id,
     workspaceId: reference,
     userId: text,
@@ -97,7 +108,7 @@ ApiToken.init(
     expiresAt: time,
     lastUsedAt: optionalTime,
     revokedAt: optionalTime,
-  },
+  }),
   { sequelize, tableName: 'api_tokens' },
 );
 
@@ -112,7 +123,7 @@ export class AuditEntry extends Model<InferAttributes<AuditEntry>, InferCreation
   declare createdAt: CreationOptional<Date>;
 }
 AuditEntry.init(
-  {
+  columns({
     id,
     workspaceId: reference,
     actorId: optionalText,
@@ -121,6 +132,6 @@ AuditEntry.init(
     targetId: optionalText,
     detail: json,
     createdAt: time,
-  },
+  }),
   { sequelize, tableName: 'audit_entries' },
 );

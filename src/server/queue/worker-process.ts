@@ -1,5 +1,5 @@
 import { randomUUID } from 'node:crypto';
-import { run, type Runner } from 'graphile-worker';
+import { Logger, run, type Runner } from 'graphile-worker';
 import { QueryTypes } from 'sequelize';
 import { config } from '../config';
 import { log } from '../log';
@@ -10,6 +10,11 @@ import { runJob } from './run-job';
 const BEAT = 2_000;
 /** A job whose heartbeat is older than this has lost its worker. */
 const LOST_AFTER_SECONDS = 15;
+
+/** The queue's own lines, with ours; only what went wrong. */
+const quietLogger = new Logger(() => (level, message) => {
+  if (level === 'error' || level === 'warning') log.warn({ queue: message }, 'queue');
+});
 
 /** Gives jobs of dead workers back to the queue, and marks jobs that have used up their attempts. */
 export async function sweep(): Promise<void> {
@@ -53,7 +58,8 @@ export async function startWorker(
     noHandleSignals: true,
     pollInterval: 2_000,
     maxPoolSize: concurrency + 2,
-    logger: undefined,
+    crontab: '',
+    logger: quietLogger,
     taskList: {
       run: async (payload) => {
         const { jobId } = payload as { jobId: string };

@@ -1,0 +1,70 @@
+import type { Role } from '@/lib/actor';
+import type { Action } from '@/features/workspaces';
+import type { WalkFixture } from './permissions.fixture';
+
+export interface WalkEndpoint {
+  /** What a role must be able to do; null where every signed-in person sees only their own. */
+  readonly needs: Action | null;
+  /** Narrower than `needs`: the fixture's view belongs to the analyst, and what is theirs others may not change. */
+  readonly only?: readonly Role[];
+  readonly query?: (fixture: WalkFixture) => Record<string, string>;
+  readonly body?: (fixture: WalkFixture) => unknown;
+}
+
+const see = (needs: Action, query?: WalkEndpoint['query']): WalkEndpoint =>
+  query ? { needs, query } : { needs };
+const change = (needs: Action, body?: WalkEndpoint['body'], only?: readonly Role[]): WalkEndpoint => ({
+  needs,
+  ...(body ? { body } : {}),
+  ...(only ? { only } : {}),
+});
+const SHARERS: readonly Role[] = ['owner', 'admin', 'analyst'];
+
+/** Endpoints that answer anyone. */
+export const PUBLIC = ['GET /openapi.json'];
+
+const REASON = 'Looked at recent posts and asked two raters.';
+
+/** Every other endpoint, with what it needs and a request that is well formed. */
+export const ENDPOINTS: Readonly<Record<string, WalkEndpoint>> = {
+  'GET /jobs/{job}': see('explore.open'),
+  // Only the person who started a job and admins stop it; the fixture's was started by the moderator.
+  'DELETE /jobs/{job}': change('explore.open', undefined, ['owner', 'admin', 'moderator']),
+  'GET /jobs/{job}/events': see('explore.open'),
+
+  'GET /communities/{community}/views': see('views.open'),
+  'POST /communities/{community}/views': change('views.save', (f) => ({
+    name: 'Walked',
+    place: 'map',
+    snapshotId: f.params.snapshot,
+    state: {},
+  })),
+  'GET /views/{view}': see('views.open'),
+  'PATCH /views/{view}': change('views.save', () => ({ version: 99, name: 'Walked' }), ['analyst']),
+  'DELETE /views/{view}': change('views.save', undefined, SHARERS),
+  'GET /views/{view}/shares': change('views.save', undefined, SHARERS),
+  'POST /views/{view}/shares': change('views.save', () => ({ role: 'moderator' }), SHARERS),
+  'DELETE /views/{view}/shares/{share}': change('views.save', undefined, SHARERS),
+  'GET /views/{view}/comments': see('views.open'),
+  'POST /views/{view}/comments': change('views.open', () => ({ body: 'Walked by.' })),
+
+  'GET /snapshots/{snapshot}/members': see('explore.open', () => ({ columns: 'degree' })),
+  'GET /snapshots/{snapshot}/members/{member}': see('explore.open'),
+  'GET /snapshots/{snapshot}/members.csv': see('export.tables'),
+  'GET /snapshots/{snapshot}/members.jsonl': see('export.tables'),
+  'GET /snapshots/{snapshot}/values': see('explore.open', () => ({ field: 'degree' })),
+  'GET /snapshots/{snapshot}/handles': see('explore.open'),
+  'GET /snapshots/{snapshot}/matching': see('explore.open', () => ({ filter: '[]' })),
+
+  'POST /readings/{reading}/cases': change('cases.open', () => ({ preview: true })),
+  'GET /workspaces/{workspace}/cases': see('cases.read'),
+  'GET /cases/{case}': see('cases.read'),
+  'PATCH /cases/{case}': change('cases.work', () => ({ version: 99, priority: 'high' })),
+  'POST /cases/{case}/notes': change('cases.work', () => ({ body: 'Asked how the swap went.' })),
+  'POST /cases/{case}/decisions': change('cases.work', () => ({
+    version: 99,
+    decision: 'no-concern',
+    reason: REASON,
+  })),
+  'POST /cases/{case}/reopen': change('cases.work', () => ({ version: 99, reason: REASON })),
+};

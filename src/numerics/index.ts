@@ -2,3 +2,6 @@
 export * from './types';
 export { createRandom, type Random } from './random';
 export * from './network';
+export * from './operators';
+export * from './eigen';
+export * from './groupings';

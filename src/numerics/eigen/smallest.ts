@@ -1,0 +1,266 @@
+import type { LaplacianOperator } from '../operators';
+import { createRandom, type Random } from '../random';
+import { CancelledError, NotConvergedError, type Watch } from '../types';
+import { chebyshevFilter, type Filter } from './filter';
+import { chooseDegree, nextCut } from './filter-choice';
+import { Krylov } from './krylov';
+import { rayleighRitz, type Pairs } from './rayleigh-ritz';
+import { addCombination, norm, orthogonalise, randomUnit, scale } from './vectors';
+
+export interface SmallestOptions {
+  /** How many eigenpairs, at most n − deflate.length. */
+  readonly count: number;
+  /** Residual bound relative to ‖A‖. */
+  readonly tolerance: number;
+  /** Orthonormal vectors known to be eigenvectors; the search runs in their complement. */
+  readonly deflate: readonly Float64Array[];
+  readonly seed: number;
+  /** Ceiling on products with A; `NotConvergedError` beyond it. */
+  readonly maxProducts?: number;
+}
+
+export interface SmallestPairs extends Pairs {
+  /** Largest Ritz value met, a lower bound of ‖A‖ that residuals are measured against. */
+  readonly norm: number;
+  readonly products: number;
+}
+
+/**
+ * Smallest eigenpairs of a positive semi-definite operator by polynomial-filtered thick-restart Lanczos:
+ * a plain Lanczos cycle finds the edges of the spectrum, then a Chebyshev polynomial that damps the unwanted
+ * part is used as the operator (Wu & Simon 2000; Zhou & Saad 2007; Fang & Saad 2012). The pairs are taken from a
+ * Rayleigh–Ritz step on A itself, whose residuals are what is tested. Then the complement is probed from a fresh
+ * start, as a Krylov space sees only one vector of a repeated eigenvalue.
+ */
+export function smallestEigenpairs(
+  op: LaplacianOperator,
+  options: SmallestOptions,
+  watch?: Watch,
+): SmallestPairs {
+  const search = new Search(op, options, watch);
+  let pairs = search.find(options.count, options.deflate, null);
+  for (let round = 0; ; round++) {
+    const last = pairs.values[options.count - 1]!;
+    if (options.count + options.deflate.length >= op.n || round > 2 * options.count) break;
+    const missed = search.probe(last, [...options.deflate, ...pairs.vectors]);
+    if (missed === null) break;
+    pairs = best(pairs, missed, options.count);
+  }
+  return { ...pairs, norm: search.norm, products: search.products };
+}
+
+function best(pairs: Pairs, more: Pairs, count: number): Pairs {
+  const all = [...pairs.values.keys()].map((i) => ({
+    value: pairs.values[i]!,
+    vector: pairs.vectors[i]!,
+    residual: pairs.residuals[i]!,
+  }));
+  more.values.forEach((value, i) =>
+    all.push({ value, vector: more.vectors[i]!, residual: more.residuals[i]! }),
+  );
+  all.sort((x, y) => x.value - y.value);
+  all.length = Math.min(count, all.length);
+  return {
+    values: all.map((p) => p.value),
+    vectors: all.map((p) => p.vector),
+    residuals: all.map((p) => p.residual),
+  };
+}
+
+class Search {
+  norm = 0;
+  products = 0;
+  private readonly random: Random;
+  private readonly limit: number;
+  private top = 0;
+  private filter: Filter | null = null;
+
+  constructor(
+    private readonly op: LaplacianOperator,
+    private readonly options: SmallestOptions,
+    private readonly watch: Watch | undefined,
+  ) {
+    this.random = createRandom(options.seed);
+    this.limit = options.maxProducts ?? 40_000;
+  }
+
+  /** Is there an eigenvalue below `bound` in the complement of `outside`? Returns that pair, or null. */
+  probe(bound: number, outside: readonly Float64Array[]): Pairs | null {
+    const slack = Math.max(1e-8 * bound, this.options.tolerance * this.norm);
+    const pairs = this.find(1, outside, bound - slack);
+    return pairs.values.length > 0 && pairs.values[0]! < bound - slack ? pairs : null;
+  }
+
+  /**
+   * The `count` smallest pairs in the complement of `outside`. With `above`, only one that lies below it is wanted:
+   * empty as soon as the smallest is seen to lie above.
+   */
+  find(count: number, outside: readonly Float64Array[], above: number | null): Pairs {
+    const { op } = this;
+    const room = op.n - outside.length;
+    const capacity = Math.min(room, Math.max(40, 2 * count + 24));
+    const krylov = new Krylov(op.n, capacity, outside, this.random);
+    krylov.begin(randomUnit(op.n, this.random, outside));
+    let filter = this.filter;
+    if (filter === null || above === null) {
+      const early = this.plain(krylov, count, Math.min(capacity, Math.max(24, count + 16)), outside);
+      if (early !== null) return early;
+      filter = this.firstFilter(krylov, count, capacity, outside);
+    }
+    const keep = Math.min(capacity - 2, count + Math.floor(0.4 * (capacity - count)));
+    let margin = 1;
+    let done = 0;
+    for (;;) {
+      const stride = Math.max(1, Math.min(4, Math.floor(400 / capacity)));
+      let gathered = 0;
+      while (!krylov.full) {
+        krylov.step(this.counted(filter));
+        gathered += Math.log(2 * Math.max(1, filter.at(above ?? 0)));
+        this.look(done);
+        if (krylov.size < count || (krylov.size % stride !== 0 && !krylov.full)) continue;
+        const ritz = krylov.ritz();
+        const estimates = this.estimates(ritz, count, filter);
+        const bar = this.options.tolerance * this.norm * margin;
+        done = Math.max(done, share(estimates, bar, this.norm));
+        if (above !== null && gathered > 0.5 * Math.log(op.n) + 6) {
+          if (ritz.values[0]! + ritz.residuals[0]! < filter.at(above))
+            return { values: [], vectors: [], residuals: [] };
+        }
+        const settled = estimates.every((estimate) => estimate <= bar);
+        if (!settled && !(krylov.full && krylov.size + outside.length >= op.n)) continue;
+        const m = krylov.size;
+        const span = Array.from({ length: count }, (_, r) =>
+          krylov.combination(ritz.rows.subarray(r * m, (r + 1) * m)),
+        );
+        const pairs = rayleighRitz(op, span, outside);
+        this.products += count;
+        if (pairs.residuals.every((residual) => residual <= this.options.tolerance * this.norm)) {
+          this.filter = filter;
+          return pairs;
+        }
+        margin *= 0.1;
+        if (margin < 1e-12) throw this.failure(Math.max(...pairs.residuals));
+      }
+      const ritz = krylov.ritz();
+      const cut = nextCut(filter, ritz.values, count, keep);
+      if (cut === null) {
+        krylov.restart(keep, ritz);
+      } else {
+        const start = this.mixture(krylov, ritz, Math.min(keep, count + 2), outside);
+        filter = this.makeFilter(
+          filter.inverse(ritz.values[0]!),
+          filter.inverse(ritz.values[count - 1]!),
+          cut,
+          capacity,
+        );
+        krylov.begin(start);
+      }
+    }
+  }
+
+  /** Lanczos on −A. Returns the pairs when they are good already, or the space is exhausted. */
+  private plain(
+    krylov: Krylov,
+    count: number,
+    steps: number,
+    outside: readonly Float64Array[],
+  ): Pairs | null {
+    const { op } = this;
+    while (krylov.size < steps) {
+      krylov.step((x, out) => op.combine(x, x, -1, 0, 0, out));
+      this.products++;
+      this.look(0);
+    }
+    const ritz = krylov.ritz();
+    const m = krylov.size;
+    this.norm = Math.max(this.norm, Math.abs(ritz.values[m - 1]!));
+    const edge = -ritz.values[m - 1]! + Math.max(ritz.residuals[m - 1]!, 0.01 * this.norm);
+    this.top = Math.max(this.top, Math.min(op.norm, edge));
+    const bar = this.options.tolerance * this.norm;
+    const good = ritz.residuals.subarray(0, count).every((residual) => residual <= bar);
+    if (!good && m + outside.length < op.n) return null;
+    const span = Array.from({ length: count }, (_, r) =>
+      krylov.combination(ritz.rows.subarray(r * m, (r + 1) * m)),
+    );
+    const pairs = rayleighRitz(op, span, outside);
+    this.products += count;
+    return pairs.residuals.every((residual) => residual <= bar) ? pairs : null;
+  }
+
+  private firstFilter(
+    krylov: Krylov,
+    count: number,
+    capacity: number,
+    outside: readonly Float64Array[],
+  ): Filter {
+    const ritz = krylov.ritz();
+    const last = ritz.values.length - 1;
+    const low = -ritz.values[0]!;
+    const wanted = -ritz.values[Math.min(last, count - 1)]!;
+    const cut = -ritz.values[Math.min(last, count + Math.floor(0.25 * (last - count)))]!;
+    const start = this.mixture(krylov, ritz, Math.min(last, count + 2), outside);
+    krylov.begin(start);
+    return this.makeFilter(low, wanted, cut, capacity);
+  }
+
+  private makeFilter(low: number, wanted: number, cut: number, capacity: number): Filter {
+    const a = Math.min(0.9 * this.top, Math.max(cut, wanted + 0.02 * (this.top - wanted), 1e-15 * this.top));
+    return chebyshevFilter(this.op, a, this.top, chooseDegree(this.op, low, a, this.top, capacity));
+  }
+
+  /** A start for a new Krylov space: the sum of the wanted Ritz vectors, so that nothing gained is lost. */
+  private mixture(
+    krylov: Krylov,
+    ritz: { rows: Float64Array },
+    parts: number,
+    outside: readonly Float64Array[],
+  ): Float64Array {
+    const m = krylov.size;
+    const row = new Float64Array(m);
+    for (let r = 0; r < parts; r++) for (let j = 0; j < m; j++) row[j]! += ritz.rows[r * m + j]!;
+    const start = new Float64Array(this.op.n);
+    addCombination(krylov.basis, m, row, 1, start);
+    orthogonalise(start, outside);
+    scale(start, 1 / norm(start));
+    return start;
+  }
+
+  /** Upper estimates of ‖A x − λ x‖ from the residuals of the filtered operator. */
+  private estimates(
+    ritz: { values: Float64Array; residuals: Float64Array },
+    count: number,
+    filter: Filter,
+  ): number[] {
+    return Array.from({ length: count }, (_, i) => {
+      const value = ritz.values[i]!;
+      if (!(value > 1)) return Infinity;
+      return (ritz.residuals[i]! * (filter.top - filter.inverse(value))) / (value - 1);
+    });
+  }
+
+  private counted(filter: Filter): (x: Float64Array, out: Float64Array) => void {
+    return (x, out) => {
+      filter.apply(x, out);
+      this.products += filter.degree;
+    };
+  }
+
+  private look(done: number): void {
+    if (this.watch?.cancelled?.()) throw new CancelledError();
+    this.watch?.progress?.(done, 'Eigenvectors');
+    if (this.products > this.limit) throw this.failure(NaN);
+  }
+
+  private failure(residual: number): NotConvergedError {
+    return new NotConvergedError(
+      `The eigenvectors did not settle within ${this.products} products.`,
+      residual,
+    );
+  }
+}
+
+/** Share of the way from a residual of ‖A‖ down to the bar, on a logarithmic scale. */
+function share(estimates: readonly number[], bar: number, size: number): number {
+  const worst = Math.min(size, Math.max(...estimates));
+  return worst <= bar ? 1 : Math.max(0, Math.log(size / worst) / Math.log(size / bar));
+}

@@ -1,0 +1,1 @@
+export { laplacianOperator, meanStrength, type LaplacianOperator, type Operator } from './laplacian';

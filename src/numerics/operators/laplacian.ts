@@ -1,0 +1,146 @@
+import { UnanswerableError, type LaplacianKind, type Network } from '../types';
+
+/** A symmetric operator on R^n. */
+export interface Operator {
+  readonly n: number;
+  /** A bound on the operator norm, ‖A‖ ≤ norm. */
+  readonly norm: number;
+  /** out = A x; `x` and `out` must be different arrays of length n. */
+  multiply(x: Float64Array, out: Float64Array): void;
+}
+
+export interface LaplacianOperator extends Operator {
+  readonly kind: LaplacianKind;
+  /** Mean number of stored entries in a row, for choosing between methods. */
+  readonly entriesPerRow: number;
+  /** Regularisation τ; 0 unless the kind is `regularised`. */
+  readonly tau: number;
+  /** d^{-1/2} ((d + τ)^{-1/2} when regularised; 0 on isolated members): maps u to D^{-1/2} u. All 1 for the combinatorial kind. */
+  readonly scale: Float64Array;
+  /** out = α A x + β x + γ z in one pass; `out` may be the same array as `z`, not as `x`. */
+  combine(
+    x: Float64Array,
+    z: Float64Array,
+    alpha: number,
+    beta: number,
+    gamma: number,
+    out: Float64Array,
+  ): void;
+  /** Row sums of A x for `width` vectors stored interleaved (x[i · width + v]); same layout out. */
+  multiplyBlock(x: Float64Array, width: number, out: Float64Array): void;
+  /** The matrix as n × n row-major, for small networks. */
+  dense(): Float64Array;
+}
+
+/** Mean strength, the default τ (Amini, Chen, Bickel & Levina 2013); 0 without members. */
+export function meanStrength(net: Network): number {
+  let sum = 0;
+  for (let i = 0; i < net.n; i++) sum += net.strength[i]!;
+  return net.n === 0 ? 0 : sum / net.n;
+}
+
+/**
+ * The chosen Laplacian of W as an operator (numerics.md):
+ * combinatorial `D − W`; normalised `I − D^{-1/2} W D^{-1/2}` with a zero row on isolated members (Chung 1997);
+ * regularised: the normalised Laplacian of `W + (τ/n) 11ᵀ` with strengths `d + τ`, applied as sparse plus
+ * rank one (Amini, Chen, Bickel & Levina 2013; Zhang & Rohe 2018).
+ *
+ * @param tau only for `regularised`; mean strength by default; must be positive there
+ */
+export function laplacianOperator(net: Network, kind: LaplacianKind, tau?: number): LaplacianOperator {
+  const { n, offsets, targets } = net;
+  const t = kind === 'regularised' ? (tau ?? meanStrength(net)) : 0;
+  if (kind === 'regularised' && !(t > 0 && Number.isFinite(t))) {
+    throw new UnanswerableError(
+      'bad-tau',
+      'The regularised Laplacian needs τ > 0; a network without ties has no mean strength to take it from.',
+    );
+  }
+  const { diagonal, scale, values, norm } = coefficients(net, kind, t);
+  const rankOne = kind === 'regularised' && n > 0 ? t / n : 0;
+
+  const combine: LaplacianOperator['combine'] = (x, z, alpha, beta, gamma, out) => {
+    let shift = 0;
+    if (rankOne !== 0) {
+      for (let i = 0; i < n; i++) shift += scale[i]! * x[i]!;
+      shift *= alpha * rankOne;
+    }
+    for (let i = 0; i < n; i++) {
+      let sum = 0;
+      const end = offsets[i + 1]!;
+      for (let p = offsets[i]!; p < end; p++) sum += values[p]! * x[targets[p]!]!;
+      out[i] = (alpha * diagonal[i]! + beta) * x[i]! - alpha * sum + gamma * z[i]! - shift * scale[i]!;
+    }
+  };
+
+  const multiplyBlock: LaplacianOperator['multiplyBlock'] = (x, width, out) => {
+    const shift = new Float64Array(width);
+    if (rankOne !== 0) {
+      for (let i = 0, q = 0; i < n; i++) for (let v = 0; v < width; v++, q++) shift[v]! += scale[i]! * x[q]!;
+      for (let v = 0; v < width; v++) shift[v]! *= rankOne;
+    }
+    const sum = new Float64Array(width);
+    for (let i = 0; i < n; i++) {
+      sum.fill(0);
+      for (let p = offsets[i]!, end = offsets[i + 1]!; p < end; p++) {
+        const w = values[p]!;
+        const from = targets[p]! * width;
+        for (let v = 0; v < width; v++) sum[v]! += w * x[from + v]!;
+      }
+      const at = i * width;
+      for (let v = 0; v < width; v++)
+        out[at + v] = diagonal[i]! * x[at + v]! - sum[v]! - shift[v]! * scale[i]!;
+    }
+  };
+
+  const dense = (): Float64Array => {
+    const a = new Float64Array(n * n);
+    for (let i = 0; i < n; i++) {
+      if (rankOne !== 0) for (let j = 0; j < n; j++) a[i * n + j] = -rankOne * scale[i]! * scale[j]!;
+      a[i * n + i]! += diagonal[i]!;
+      for (let p = offsets[i]!; p < offsets[i + 1]!; p++) a[i * n + targets[p]!]! -= values[p]!;
+    }
+    return a;
+  };
+
+  return {
+    kind,
+    n,
+    entriesPerRow: n === 0 ? 0 : targets.length / n,
+    tau: t,
+    norm,
+    scale,
+    combine,
+    multiply: (x, out) => combine(x, x, 1, 0, 0, out),
+    multiplyBlock,
+    dense,
+  };
+}
+
+/** Diagonal, D^{-1/2}, off-diagonal values (positive; they are subtracted) and a norm bound. */
+function coefficients(net: Network, kind: LaplacianKind, tau: number) {
+  const { n, offsets, targets, weights, strength } = net;
+  const diagonal = new Float64Array(n);
+  const scale = new Float64Array(n).fill(1);
+  if (kind === 'combinatorial') {
+    // λ_max ≤ max over ties of d_i + d_j (Anderson & Morley 1985, weighted form).
+    let norm = 0;
+    for (let i = 0; i < n; i++) {
+      diagonal[i] = strength[i]!;
+      for (let p = offsets[i]!; p < offsets[i + 1]!; p++)
+        norm = Math.max(norm, strength[i]! + strength[targets[p]!]!);
+    }
+    return { diagonal, scale, values: weights, norm };
+  }
+  for (let i = 0; i < n; i++) {
+    const d = strength[i]! + tau;
+    scale[i] = d > 0 ? 1 / Math.sqrt(d) : 0;
+    diagonal[i] = d > 0 ? 1 : 0;
+  }
+  const values = new Float64Array(weights.length);
+  for (let i = 0; i < n; i++) {
+    for (let p = offsets[i]!; p < offsets[i + 1]!; p++)
+      values[p] = weights[p]! * (scale[i]! * scale[targets[p]!]!);
+  }
+  return { diagonal, scale, values, norm: weights.length > 0 || tau > 0 ? 2 : 0 };
+}

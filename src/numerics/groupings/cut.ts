@@ -45,7 +45,8 @@ export function sweep(net: Network, vector: Float64Array, tolerance: number): Sw
 /**
  * Where to cut the order: the number of members in the lower part.
  * `sign`: below 0 (a member whose value is 0 within the tolerance goes with the upper part);
- * `median`: the allowed cut nearest to the middle; `sweep`: the lowest conductance (lowest position on ties).
+ * `median`: the allowed cut nearest to the middle; `sweep`: the lowest conductance. Of equally good cuts, as mirror
+ * images are, the highest position is taken.
  * A part smaller than `minimumSize` is not allowed under `median` and `sweep`.
  *
  * @throws UnanswerableError `no-cut` when the rule allows none
@@ -73,8 +74,8 @@ export function chooseCut(
     const size = r + 1;
     if (swept.distinct[r] === 0 || size < minimumSize || n - size < minimumSize) continue;
     const cost = rule === 'median' ? Math.abs(2 * size - n) : swept.conductance[r]!;
-    if (cost < score) {
-      score = cost;
+    if (cost <= score * (1 + 1e-12)) {
+      score = Math.min(score, cost);
       best = size;
     }
   }

@@ -1,0 +1,4 @@
+import { requireProduction } from './production.mjs';
+
+requireProduction();
+await import('../../dist/worker/worker.mjs');

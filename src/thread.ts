@@ -2,7 +2,10 @@ import { parentPort, workerData } from 'node:worker_threads';
 import type { ThreadMessage, ThreadRequest, ThreadTask } from './server/threads/protocol';
 
 /** Every task that a computing thread knows, loaded when asked for. */
-const tasks: Readonly<Record<string, () => Promise<ThreadTask>>> = {};
+const tasks: Readonly<Record<string, () => Promise<ThreadTask>>> = {
+  grouping: async () => (await import('./features/groupings/compute')).computeGrouping,
+  'smoother-groups': async () => (await import('./features/groupings/compute')).computeSmootherGroups,
+};
 
 const { task, input, stop } = workerData as ThreadRequest;
 const flag = new Int32Array(stop);

@@ -1,0 +1,16 @@
+export { groupingOperations } from './operations';
+export {
+  CUTS,
+  LAPLACIANS,
+  METHODS,
+  MOST_GROUPS,
+  seedSchema,
+  type Boundary,
+  type Comparison,
+  type Group,
+  type GroupingMemberView,
+  type GroupingResult,
+  type GroupingSummary,
+  type GroupingView,
+  type MakeGrouping,
+} from './groupings';

@@ -1,0 +1,2 @@
+export { GroupingApp, type GroupingProps } from './GroupingApp';
+export { GroupsApp, type GroupsProps } from './GroupsApp';

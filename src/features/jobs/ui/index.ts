@@ -1,0 +1,2 @@
+export { JobPanel, type JobPanelProps } from './JobPanel';
+export { stopJob, useJob } from './use-job';

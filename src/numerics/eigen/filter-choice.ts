@@ -1,5 +1,5 @@
 import type { LaplacianOperator } from '../operators';
-import type { Filter } from './filter';
+import { growthAt, type Filter } from './filter';
 
 /**
  * Degree of the filter: high enough that products outweigh the orthogonalisation of one step, but with an
@@ -12,7 +12,7 @@ export function chooseDegree(
   top: number,
   capacity: number,
 ): number {
-  const growth = Math.acosh(Math.max(1 + 1e-12, (cut + top - 2 * low) / (top - cut)));
+  const growth = growthAt(low, cut, top);
   const byWork = Math.ceil((3 * capacity) / Math.max(2, op.entriesPerRow));
   const byGrowth = Math.ceil(7 / growth);
   return Math.max(2, Math.min(Math.max(4, byWork), byGrowth));

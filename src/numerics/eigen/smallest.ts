@@ -3,6 +3,7 @@ import { createRandom, type Random } from '../random';
 import { CancelledError, NotConvergedError, type Watch } from '../types';
 import { chebyshevFilter, type Filter } from './filter';
 import { chooseDegree, nextCut } from './filter-choice';
+import { inversePairs, pseudoInverse } from './inverse';
 import { Krylov } from './krylov';
 import { rayleighRitz, type Pairs } from './rayleigh-ritz';
 import { addCombination, norm, orthogonalise, randomUnit, scale } from './vectors';
@@ -67,6 +68,9 @@ function best(pairs: Pairs, more: Pairs, count: number): Pairs {
   };
 }
 
+/** Growth of the filter per degree below which a factorisation is tried: hundreds of products would be needed. */
+const slowGrowth = 0.35;
+
 class Search {
   norm = 0;
   products = 0;
@@ -74,6 +78,8 @@ class Search {
   private readonly limit: number;
   private top = 0;
   private filter: Filter | null = null;
+  /** Undefined until the gap was seen to be small; null where a factorisation is too costly. */
+  private inverse: ReturnType<typeof pseudoInverse> | undefined;
 
   constructor(
     private readonly op: LaplacianOperator,
@@ -86,7 +92,8 @@ class Search {
 
   /** Is there an eigenvalue below `bound` in the complement of `outside`? Returns that pair, or null. */
   probe(bound: number, outside: readonly Float64Array[]): Pairs | null {
-    const slack = Math.max(1e-8 * bound, this.options.tolerance * this.norm);
+    // With the inverse λ is known to many digits; otherwise a Ritz value may be off by its residual.
+    const slack = Math.max(1e-8 * bound, this.inverse ? 0 : this.options.tolerance * this.norm);
     const pairs = this.find(1, outside, bound - slack);
     return pairs.values.length > 0 && pairs.values[0]! < bound - slack ? pairs : null;
   }
@@ -97,6 +104,7 @@ class Search {
    */
   find(count: number, outside: readonly Float64Array[], above: number | null): Pairs {
     const { op } = this;
+    if (this.inverse) return this.byInverse(this.inverse, count, outside, above);
     const room = op.n - outside.length;
     const capacity = Math.min(room, Math.max(40, 2 * count + 24));
     const krylov = new Krylov(op.n, capacity, outside, this.random);
@@ -138,8 +146,9 @@ class Search {
           this.filter = filter;
           return pairs;
         }
-        margin *= 0.1;
-        if (margin < 1e-12) throw this.failure(Math.max(...pairs.residuals));
+        const worst = Math.max(...pairs.residuals);
+        margin = (0.7 * Math.max(...estimates)) / worst;
+        if (!(margin > 1e-12)) throw this.failure(worst);
       }
       const ritz = krylov.ritz();
       const cut = nextCut(filter, ritz.values, count, keep);
@@ -153,9 +162,28 @@ class Search {
           cut,
           capacity,
         );
+        if (filter.growth < slowGrowth && this.inverse === undefined) {
+          this.inverse = pseudoInverse(op);
+          if (this.inverse) return this.byInverse(this.inverse, count, outside, above);
+        }
         krylov.begin(start);
       }
     }
+  }
+
+  private byInverse(
+    solve: (x: Float64Array, out: Float64Array) => void,
+    count: number,
+    outside: readonly Float64Array[],
+    above: number | null,
+  ): Pairs {
+    const pairs = inversePairs(this.op, solve, count, outside, above, this.random, () => {
+      this.products++;
+      this.look(0.5);
+    });
+    const worst = Math.max(0, ...pairs.residuals);
+    if (!(worst <= this.options.tolerance * this.norm)) throw this.failure(worst);
+    return pairs;
   }
 
   /** Lanczos on −A. Returns the pairs when they are good already, or the space is exhausted. */
@@ -204,8 +232,8 @@ class Search {
   }
 
   private makeFilter(low: number, wanted: number, cut: number, capacity: number): Filter {
-    const a = Math.min(0.9 * this.top, Math.max(cut, wanted + 0.02 * (this.top - wanted), 1e-15 * this.top));
-    return chebyshevFilter(this.op, a, this.top, chooseDegree(this.op, low, a, this.top, capacity));
+    const a = Math.min(0.9 * this.top, Math.max(cut, 1.1 * wanted, 1e-15 * this.top));
+    return chebyshevFilter(this.op, a, this.top, low, chooseDegree(this.op, low, a, this.top, capacity));
   }
 
   /** A start for a new Krylov space: the sum of the wanted Ritz vectors, so that nothing gained is lost. */
@@ -225,7 +253,10 @@ class Search {
     return start;
   }
 
-  /** Upper estimates of ‖A x − λ x‖ from the residuals of the filtered operator. */
+  /**
+   * Estimates of ‖A x − λ x‖ from the residuals of the filtered operator, as if all of the error lay next to λ:
+   * on the low side, so what they promise is checked, and the next check waits until they have fallen in proportion.
+   */
   private estimates(
     ritz: { values: Float64Array; residuals: Float64Array },
     count: number,
@@ -233,8 +264,7 @@ class Search {
   ): number[] {
     return Array.from({ length: count }, (_, i) => {
       const value = ritz.values[i]!;
-      if (!(value > 1)) return Infinity;
-      return (ritz.residuals[i]! * (filter.top - filter.inverse(value))) / (value - 1);
+      return value > 1 ? ritz.residuals[i]! / filter.slope(value) : Infinity;
     });
   }
 

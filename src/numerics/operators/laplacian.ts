@@ -11,6 +11,7 @@ export interface Operator {
 
 export interface LaplacianOperator extends Operator {
   readonly kind: LaplacianKind;
+  readonly network: Network;
   /** Mean number of stored entries in a row, for choosing between methods. */
   readonly entriesPerRow: number;
   /** Regularisation τ; 0 unless the kind is `regularised`. */
@@ -105,6 +106,7 @@ export function laplacianOperator(net: Network, kind: LaplacianKind, tau?: numbe
 
   return {
     kind,
+    network: net,
     n,
     entriesPerRow: n === 0 ? 0 : targets.length / n,
     tau: t,

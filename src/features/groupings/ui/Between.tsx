@@ -1,5 +1,6 @@
-import { Heatmap, SplitBar } from '@/components/charts';
+import { Heatmap, RampLegend, SplitBar } from '@/components/charts';
 import { Tag } from '@/components/ui';
+import { formatNumber } from '@/lib/format';
 import { groupColour } from '@/lib/groups';
 import type { Group, GroupingView } from '../groupings';
 import { groupTitle } from './words';
@@ -7,16 +8,22 @@ import { groupTitle } from './words';
 /** Most groups that the matrix shows beside the cards. */
 const MOST = 12;
 
-/** The pair of groups with the fewest ties between them that still has any: where the cloth is loosest. */
+/**
+ * Where the cloth is loosest: the group with the lowest conductance, and the group that it hangs on by most ties.
+ * Null for two groups (there is only the one seam) and where nothing crosses.
+ */
 export function loosestSeam(view: GroupingView): [number, number] | null {
-  let best: [number, number] | null = null;
-  let least = Infinity;
-  view.between.perThousand.forEach((row, a) =>
-    row.forEach((value, b) => {
-      if (b > a && value !== null && value > 0 && value < least) [best, least] = [[a, b], value];
-    }),
+  const cut = view.groups.filter(
+    (group) => !group.islet && group.conductance !== null && group.conductance > 0,
   );
-  return view.groups.filter((group) => !group.islet).length > 2 ? best : null;
+  if (cut.length < 3) return null;
+  const { index } = cut.reduce((a, b) => (b.conductance! < a.conductance! ? b : a));
+  const row = view.between.weights[index] ?? [];
+  let other = -1;
+  row.forEach((weight, b) => {
+    if (b !== index && weight > 0 && (other < 0 || weight > row[other]!)) other = b;
+  });
+  return other < 0 ? null : [index, other];
 }
 
 /** How densely groups are tied, inside and between. */
@@ -51,12 +58,20 @@ export function TiesBetween({ view }: { view: GroupingView }) {
             shown.map((column) => view.between.perThousand[row.index]?.[column.index] ?? null),
           )}
           stitched={stitched}
+          format={(value) => formatNumber(value, value < 0.1 ? 2 : value < 10 ? 1 : 0)}
         />
       </div>
-      <p className="small mut" style={{ marginTop: 8 }}>
-        Darker means more ties.{stitched.length > 0 && ' Stitched: the loosest seam.'}
-        {view.groups.length > shown.length && ` The ${shown.length} largest groups are shown.`}
-      </p>
+      <div style={{ marginTop: 10 }}>
+        <RampLegend
+          kind="sequential"
+          low="Few"
+          middle={stitched.length > 0 ? 'Stitched: the loosest seam' : undefined}
+          high="Many"
+        />
+      </div>
+      {view.groups.length > shown.length && (
+        <p className="small mut">{`The ${shown.length} largest groups are shown.`}</p>
+      )}
     </section>
   );
 }

@@ -1,5 +1,5 @@
 import { Bar, DivergingBar } from '@/components/charts';
-import { IconButton, Tag } from '@/components/ui';
+import { Button, Tag } from '@/components/ui';
 import { formatCount, formatNumber, formatPercent } from '@/lib/format';
 import type { Group } from '../groupings';
 import { groupTitle } from './words';
@@ -16,10 +16,17 @@ interface CardsProps {
 }
 
 export function GroupCards({ groups, loosest, onSplit }: CardsProps) {
+  const full = Math.max(0.25, ...groups.map((group) => group.leaving ?? 0));
   return (
     <div className="gcards">
       {groups.map((group) => (
-        <GroupCard key={group.index} group={group} on={group.index === loosest} onSplit={onSplit} />
+        <GroupCard
+          key={group.index}
+          group={group}
+          on={group.index === loosest}
+          full={full}
+          onSplit={onSplit}
+        />
       ))}
     </div>
   );
@@ -28,10 +35,13 @@ export function GroupCards({ groups, loosest, onSplit }: CardsProps) {
 function GroupCard({
   group,
   on,
+  full,
   onSplit,
 }: {
   group: Group;
   on: boolean;
+  /** Share of ties leaving that fills the bar. */
+  full: number;
   onSplit?: ((group: Group) => void) | undefined;
 }) {
   const title = groupTitle(group);
@@ -41,30 +51,21 @@ function GroupCard({
         <div className="row">
           <Tag letter={group.letter} size="large" />
           <div className="grow">
-            <h3 className="h4" style={{ fontSize: 15 }}>
+            <h2 className="h4" style={{ fontSize: 15 }}>
               {title}
-            </h3>
+            </h2>
             <div className="small mut">
               {formatCount(group.size, 'member')}
               {group.islet && ', an islet'}
             </div>
           </div>
-          {onSplit && group.size >= 10 && (
-            <IconButton
-              icon="groups"
-              label={`Split ${title}`}
-              size="small"
-              kind="quiet"
-              onClick={() => onSplit(group)}
-            />
-          )}
         </div>
         <div className="row sp small" style={{ marginTop: 9 }}>
           <span className="mut">Ties leaving</span>
           <b>{formatPercent(group.leaving)}</b>
         </div>
         <div style={{ marginTop: 3 }}>
-          <Bar share={group.leaving ?? 0} />
+          <Bar share={(group.leaving ?? 0) / full} />
         </div>
         <div className="row sp small" style={{ marginTop: 6 }}>
           <span className="mut">Conductance</span>
@@ -82,6 +83,13 @@ function GroupCard({
             <span className="vh">{`${formatNumber(entry.difference, 1)} standard deviations`}</span>
           </div>
         ))}
+        {onSplit && group.size >= 10 && (
+          <div style={{ display: 'flex', justifyContent: 'flex-end', marginTop: 4 }}>
+            <Button kind="quiet" size="small" aria-label={`Split ${title}`} onClick={() => onSplit(group)}>
+              Split
+            </Button>
+          </div>
+        )}
       </div>
     </article>
   );

@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import { Banner, Button, ButtonLink, ErrorState, Menu, PageHead, SegmentedControl } from '@/components/ui';
+import { Banner, Button, ButtonLink, ErrorState, PageHead, SegmentedControl } from '@/components/ui';
 import { formatDate } from '@/lib/format';
 import { JobPanel } from '@/features/jobs/ui';
 import type { Group, GroupingView } from '../groupings';
@@ -63,8 +63,7 @@ function Ready({
   const [dialog, setDialog] = useState<'new' | 'names' | null>(null);
   const [split, setSplit] = useState<Group | null>(null);
   const seam = loosestSeam(view);
-  // Of the two groups at the loosest seam, the smaller one is the one that could come away.
-  const loosest = seam && Math.max(...seam);
+  const loosest = seam && seam[0];
   const maker = view.createdBy ? `, by ${view.createdBy}` : '';
   const islets = view.groups.filter((group) => group.islet).length;
   return (
@@ -88,32 +87,11 @@ function Ready({
               value={look}
               onChange={setLook}
             />
-            {(canExport || canMake) && (
-              <Menu
-                trigger="More"
-                entries={[
-                  ...(canMake
-                    ? [
-                        {
-                          id: 'names',
-                          label: 'Change names',
-                          icon: 'note' as const,
-                          onAction: () => setDialog('names'),
-                        },
-                      ]
-                    : []),
-                  ...(canExport
-                    ? [
-                        {
-                          id: 'export',
-                          label: 'Export CSV',
-                          icon: 'download' as const,
-                          href: `/api/v1/groupings/${view.id}/members.csv`,
-                        },
-                      ]
-                    : []),
-                ]}
-              />
+            {canMake && <Button onClick={() => setDialog('names')}>Names</Button>}
+            {canExport && (
+              <ButtonLink icon="download" href={`/api/v1/groupings/${view.id}/members.csv`}>
+                Export
+              </ButtonLink>
             )}
             {canMake && (
               <Button kind="primary" icon="plus" onClick={() => setDialog('new')}>

@@ -3,6 +3,8 @@ import type { ThreadMessage, ThreadRequest, ThreadTask } from './server/threads/
 
 /** Every task that a computing thread knows, loaded when asked for. */
 const tasks: Readonly<Record<string, () => Promise<ThreadTask>>> = {
+  spectrum: async () => (await import('./features/network/compute')).computeSpectrum,
+  shape: async () => (await import('./features/network/compute')).computeShape,
   grouping: async () => (await import('./features/groupings/compute')).computeGrouping,
   'smoother-groups': async () => (await import('./features/groupings/compute')).computeSmootherGroups,
 };

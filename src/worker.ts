@@ -1,13 +1,8 @@
+import { registry } from '@/jobs';
 import { config } from '@/server/config';
 import { log } from '@/server/log';
-import { sendMail } from '@/server/mail';
-import { startWorker, type JobRegistry } from '@/server/queue';
+import { startWorker } from '@/server/queue';
 import { ensureBucket } from '@/server/storage';
-
-/** Every kind of job there is: one explicit list, handlers loaded when first needed. */
-const registry: JobRegistry = {
-  mail: { load: () => Promise.resolve(sendMail) },
-};
 
 config();
 await ensureBucket();

@@ -1,16 +1,23 @@
 import type { APIRoute } from 'astro';
 import { caseOperations } from '@/features/cases';
+import { groupingOperations } from '@/features/groupings';
 import { jobOperations } from '@/features/jobs';
 import { memberOperations } from '@/features/members';
+import { readingOperations } from '@/features/readings';
 import { viewOperations } from '@/features/views';
 import { openApiDocument } from '@/lib/openapi';
 import type { Operation } from '@/lib/operation';
 import { VERSION } from '@/lib/version';
 
 /** Every call of the API, in the order in which the document shows them. */
-const OPERATIONS = [memberOperations, viewOperations, caseOperations, jobOperations].flatMap((group) =>
-  Object.values(group),
-) as unknown as Operation[];
+const OPERATIONS = [
+  groupingOperations,
+  readingOperations,
+  memberOperations,
+  viewOperations,
+  caseOperations,
+  jobOperations,
+].flatMap((group) => Object.values(group)) as unknown as Operation[];
 
 let document: object | undefined;
 

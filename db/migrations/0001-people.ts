@@ -22,6 +22,7 @@ export const people: Migration = {
       id text PRIMARY KEY, identifier text NOT NULL, value text NOT NULL, expires_at timestamptz NOT NULL,
       created_at timestamptz NOT NULL DEFAULT now(), updated_at timestamptz NOT NULL DEFAULT now());
     CREATE INDEX verifications_identifier ON verifications (identifier);
+    CREATE TABLE rate_limits (id text PRIMARY KEY, key text NOT NULL UNIQUE, count integer NOT NULL, last_request bigint NOT NULL);
     CREATE TABLE workspaces (
       id uuid PRIMARY KEY, name text NOT NULL, viewers_see_names boolean NOT NULL DEFAULT false,
       smallest_group integer NOT NULL DEFAULT 5 CHECK (smallest_group >= 1),

@@ -1,15 +1,9 @@
 import { createTransport, type Transporter } from 'nodemailer';
 import type { Transaction } from 'sequelize';
+import type { Letter } from '@/lib/letter';
 import { config } from './config';
 import { OutgoingMail, sequelize } from './models';
 import { enqueue, type JobHandler } from './queue';
-
-export interface Letter {
-  readonly to: string;
-  readonly subject: string;
-  readonly text: string;
-  readonly html: string;
-}
 
 let transport: Transporter | undefined;
 

@@ -14,7 +14,7 @@ export interface LaplacianFactor {
  * their digits. Cheap on rings, trees, grids and other thin networks; on social networks the fill explodes.
  *
  * @param budget ceiling on elementary operations
- * @returns null when the budget ran out
+ * @returns null when the budget ran out, or is seen to
  */
 export function factoriseLaplacian(net: Network, budget: number): LaplacianFactor | null {
   const { n } = net;
@@ -35,6 +35,8 @@ export function factoriseLaplacian(net: Network, budget: number): LaplacianFacto
   const mark = new Int32Array(n);
   const order = new Int32Array(n);
   const pivots = new Float64Array(n);
+  // Thin networks are nearly used up before their least degree rises; where it rises early the fill will explode.
+  const crowded = Math.max(20, (1.5 * net.targets.length) / n + 4);
   let work = 0;
   let lowest = 0;
   for (let k = 0; k < n; k++) {
@@ -78,7 +80,7 @@ export function factoriseLaplacian(net: Network, budget: number): LaplacianFacto
       lowest = Math.min(lowest, list.length);
     }
     for (let x = 0; x < share.length; x++) share[x]! /= pivot;
-    if (work > budget) return null;
+    if (work > budget || (lowest > crowded && n - k > 0.35 * n)) return null;
   }
   return flatten(n, order, pivots, neighbours, weights);
 }

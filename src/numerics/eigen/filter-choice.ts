@@ -2,8 +2,9 @@ import type { LaplacianOperator } from '../operators';
 import { growthAt, type Filter } from './filter';
 
 /**
- * Degree of the filter: high enough that products outweigh the orthogonalisation of one step, but with an
- * amplification of the lowest value of at most about e⁷, beyond which the higher wanted vectors lose digits.
+ * Degree of the filter: as high as makes products outweigh the orthogonalisation of one step, and high enough for some
+ * growth on a small gap, but with an amplification of the lowest value of at most about e⁷, beyond which the higher
+ * wanted vectors lose digits. Every further degree costs products, as a filter is a worse polynomial than Lanczos's own.
  */
 export function chooseDegree(
   op: LaplacianOperator,
@@ -13,9 +14,9 @@ export function chooseDegree(
   capacity: number,
 ): number {
   const growth = growthAt(low, cut, top);
-  const byWork = Math.ceil((3 * capacity) / Math.max(2, op.entriesPerRow));
-  const byGrowth = Math.ceil(7 / growth);
-  return Math.max(2, Math.min(Math.max(4, byWork), byGrowth));
+  const byWork = Math.ceil(1 + capacity / (2 * (op.entriesPerRow + 2)));
+  const byGap = Math.ceil(1 / growth);
+  return Math.max(2, Math.min(Math.max(byWork, byGap), Math.ceil(7 / growth), 100));
 }
 
 /**

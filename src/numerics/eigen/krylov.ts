@@ -1,6 +1,6 @@
 import type { Random } from '../random';
 import { symmetricEigen } from './dense';
-import { addCombination, norm, project, randomUnit, scale } from './vectors';
+import { addCombination, axpy, dot, norm, project, randomUnit, scale } from './vectors';
 
 /**
  * A thick-restart Lanczos basis (Wu & Simon 2000) with full reorthogonalisation, for any symmetric operator.
@@ -14,6 +14,8 @@ export class Krylov {
   size = 0;
   /** Norm of the last remainder: B V = V T + β v_{size} eᵀ. */
   beta = 0;
+  /** Ritz vectors carried over by the last restart; the step right after couples to all of them. */
+  private kept = 0;
   private readonly h: Float64Array;
 
   constructor(
@@ -30,6 +32,7 @@ export class Krylov {
   begin(start: Float64Array): void {
     this.size = 0;
     this.beta = 0;
+    this.kept = 0;
     this.projected.fill(0);
     this.slot(0).set(start);
   }
@@ -44,7 +47,15 @@ export class Krylov {
     const w = this.slot(j + 1);
     apply(this.basis[j]!, w);
     const before = norm(w);
-    let after = before;
+    // The three-term recurrence first: what it leaves is nearly orthogonal, so that one full pass mostly suffices.
+    if (j > this.kept) {
+      axpy(-this.beta, this.basis[j - 1]!, w);
+      this.add(j - 1, j, this.beta);
+    }
+    const alpha = dot(this.basis[j]!, w);
+    axpy(-alpha, this.basis[j]!, w);
+    this.add(j, j, alpha);
+    let after = norm(w);
     for (let pass = 0; pass < 3; pass++) {
       if (this.outside.length > 0) {
         project(this.outside, this.outside.length, w, this.h);
@@ -111,6 +122,7 @@ export class Krylov {
     this.projected.fill(0);
     for (let r = 0; r < keep; r++) this.projected[r * this.capacity + r] = ritz.values[r]!;
     this.size = keep;
+    this.kept = keep;
   }
 
   private add(i: number, j: number, value: number): void {

@@ -6,6 +6,7 @@ import { chooseDegree, nextCut } from './filter-choice';
 import { inversePairs, pseudoInverse } from './inverse';
 import { Krylov } from './krylov';
 import { rayleighRitz, type Pairs } from './rayleigh-ritz';
+import { best, share } from './search-helpers';
 import { addCombination, norm, orthogonalise, randomUnit, scale } from './vectors';
 
 export interface SmallestOptions {
@@ -50,26 +51,10 @@ export function smallestEigenpairs(
   return { ...pairs, norm: search.norm, products: search.products };
 }
 
-function best(pairs: Pairs, more: Pairs, count: number): Pairs {
-  const all = [...pairs.values.keys()].map((i) => ({
-    value: pairs.values[i]!,
-    vector: pairs.vectors[i]!,
-    residual: pairs.residuals[i]!,
-  }));
-  more.values.forEach((value, i) =>
-    all.push({ value, vector: more.vectors[i]!, residual: more.residuals[i]! }),
-  );
-  all.sort((x, y) => x.value - y.value);
-  all.length = Math.min(count, all.length);
-  return {
-    values: all.map((p) => p.value),
-    vectors: all.map((p) => p.vector),
-    residuals: all.map((p) => p.residual),
-  };
-}
+/** Products after which a factorisation is tried: the gap is small, and on a thin network the inverse is cheap. */
+const patience = 250;
 
-/** Growth of the filter per degree below which a factorisation is tried: hundreds of products would be needed. */
-const slowGrowth = 0.35;
+const nothing: Pairs = { values: [], vectors: [], residuals: [] };
 
 class Search {
   norm = 0;
@@ -100,7 +85,8 @@ class Search {
 
   /**
    * The `count` smallest pairs in the complement of `outside`. With `above`, only one that lies below it is wanted:
-   * empty as soon as the smallest is seen to lie above.
+   * empty as soon as the smallest is seen to lie above, or when nothing lower has shown itself after half the
+   * products that the search took so far.
    */
   find(count: number, outside: readonly Float64Array[], above: number | null): Pairs {
     const { op } = this;
@@ -118,9 +104,11 @@ class Search {
     const keep = Math.min(capacity - 2, count + Math.floor(0.4 * (capacity - count)));
     let margin = 1;
     let done = 0;
+    let gathered = 0;
+    const before = this.products;
     for (;;) {
-      const stride = Math.max(1, Math.min(4, Math.floor(400 / capacity)));
-      let gathered = 0;
+      // The small eigenproblem of a check costs as much as some products once the basis is large.
+      const stride = Math.max(3, Math.floor(capacity / 8));
       while (!krylov.full) {
         krylov.step(this.counted(filter));
         gathered += Math.log(2 * Math.max(1, filter.at(above ?? 0)));
@@ -131,8 +119,9 @@ class Search {
         const bar = this.options.tolerance * this.norm * margin;
         done = Math.max(done, share(estimates, bar, this.norm));
         if (above !== null && gathered > 0.5 * Math.log(op.n) + 6) {
-          if (ritz.values[0]! + ritz.residuals[0]! < filter.at(above))
-            return { values: [], vectors: [], residuals: [] };
+          const bar = filter.at(above);
+          const surely = ritz.values[0]! + ritz.residuals[0]! < bar;
+          if (surely || (ritz.values[0]! < bar && this.products - before > 0.5 * before)) return nothing;
         }
         const settled = estimates.every((estimate) => estimate <= bar);
         if (!settled && !(krylov.full && krylov.size + outside.length >= op.n)) continue;
@@ -150,6 +139,10 @@ class Search {
         margin = (0.7 * Math.max(...estimates)) / worst;
         if (!(margin > 1e-12)) throw this.failure(worst);
       }
+      if (this.inverse === undefined && this.products > patience) {
+        this.inverse = pseudoInverse(op);
+        if (this.inverse) return this.byInverse(this.inverse, count, outside, above);
+      }
       const ritz = krylov.ritz();
       const cut = nextCut(filter, ritz.values, count, keep);
       if (cut === null) {
@@ -162,10 +155,6 @@ class Search {
           cut,
           capacity,
         );
-        if (filter.growth < slowGrowth && this.inverse === undefined) {
-          this.inverse = pseudoInverse(op);
-          if (this.inverse) return this.byInverse(this.inverse, count, outside, above);
-        }
         krylov.begin(start);
       }
     }
@@ -225,7 +214,7 @@ class Search {
     const last = ritz.values.length - 1;
     const low = -ritz.values[0]!;
     const wanted = -ritz.values[Math.min(last, count - 1)]!;
-    const cut = -ritz.values[Math.min(last, count + Math.floor(0.25 * (last - count)))]!;
+    const cut = -ritz.values[Math.min(last, count + Math.floor(0.2 * (last - count)))]!;
     const start = this.mixture(krylov, ritz, Math.min(last, count + 2), outside);
     krylov.begin(start);
     return this.makeFilter(low, wanted, cut, capacity);
@@ -287,10 +276,4 @@ class Search {
       residual,
     );
   }
-}
-
-/** Share of the way from a residual of ‖A‖ down to the bar, on a logarithmic scale. */
-function share(estimates: readonly number[], bar: number, size: number): number {
-  const worst = Math.min(size, Math.max(...estimates));
-  return worst <= bar ? 1 : Math.max(0, Math.log(size / worst) / Math.log(size / bar));
 }

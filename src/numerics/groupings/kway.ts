@@ -21,8 +21,11 @@ export interface SpectralGrouping {
   readonly labels: Int32Array;
   /** Number of groups that were found, islets not counted; below the wanted k where small groups were joined. */
   readonly k: number;
+  /** The k eigenvalues whose vectors were used, and their residuals. */
   readonly eigenvalues: Float64Array;
   readonly residuals: Float64Array;
+  /** The first eigenvalues (up to 21, or k + 1) for the picture of gaps, to about 1e-4 of the norm or better. */
+  readonly overview: Float64Array;
   /** λ_{k+1} − λ_k for k = 2…20, largest gap first. */
   readonly suggestions: readonly { readonly k: number; readonly gap: number }[];
   /** Members that were grouped: those of all components with at least the smallest size. */
@@ -69,10 +72,14 @@ export function spectralGrouping(net: Network, options: SpectralOptions, watch?:
     );
   }
   const { laplacian, tau, tolerance, seed } = options;
+  // A gap needs few digits: an eigenvalue is off by the square of its residual, so a coarse solve is enough for the
+  // suggestions, and only the k vectors that are used are computed to the promised accuracy.
   const count = Math.min(part.n, Math.max(21, wanted + 1));
-  const solution = spectrum(part, { laplacian, tau, count, tolerance, seed }, watch);
-  const suggestions = eigengaps(solution.values);
+  const coarse = Math.max(tolerance ?? 1e-8, 1e-4);
+  const overview = spectrum(part, { laplacian, tau, count, tolerance: coarse, seed }, watch);
+  const suggestions = eigengaps(overview.values);
   const k = wanted || suggestions[0]!.k;
+  const solution = spectrum(part, { laplacian, tau, count: k, tolerance, seed }, watch);
   watch?.progress?.(0.95, 'k-means');
   const found = kMeans(embedding(solution, part.n, k), k, k, createRandom(seed));
   const merged = mergeSmall(part, found.labels, Math.min(smallest, Math.floor(part.n / 2)));
@@ -88,6 +95,7 @@ export function spectralGrouping(net: Network, options: SpectralOptions, watch?:
     k: groups,
     eigenvalues: solution.values,
     residuals: solution.residuals,
+    overview: overview.values,
     suggestions,
     scope: { members: part.n, components: large.length },
     islets: small.map((_, at) => groups + at),

@@ -66,12 +66,7 @@ export function laplacianOperator(net: Network, kind: LaplacianKind, tau?: numbe
       for (let i = 0; i < n; i++) shift += scale[i]! * x[i]!;
       shift *= alpha * rankOne;
     }
-    for (let i = 0; i < n; i++) {
-      let sum = 0;
-      const end = offsets[i + 1]!;
-      for (let p = offsets[i]!; p < end; p++) sum += values[p]! * x[targets[p]!]!;
-      out[i] = (alpha * diagonal[i]! + beta) * x[i]! - alpha * sum + gamma * z[i]! - shift * scale[i]!;
-    }
+    combineRows(offsets, targets, values, diagonal, scale, x, z, alpha, beta, gamma, shift, out);
   };
 
   const multiplyBlock: LaplacianOperator['multiplyBlock'] = (x, width, out) => {
@@ -117,6 +112,30 @@ export function laplacianOperator(net: Network, kind: LaplacianKind, tau?: numbe
     multiplyBlock,
     dense,
   };
+}
+
+/** The product itself, apart from any closure so that the engine keeps every array in a register. */
+function combineRows(
+  offsets: Int32Array,
+  targets: Int32Array,
+  values: Float64Array,
+  diagonal: Float64Array,
+  scale: Float64Array,
+  x: Float64Array,
+  z: Float64Array,
+  alpha: number,
+  beta: number,
+  gamma: number,
+  shift: number,
+  out: Float64Array,
+): void {
+  const n = out.length;
+  let p = 0;
+  for (let i = 0; i < n; i++) {
+    let sum = 0;
+    for (const end = offsets[i + 1]!; p < end; p++) sum += values[p]! * x[targets[p]!]!;
+    out[i] = (alpha * diagonal[i]! + beta) * x[i]! - alpha * sum + gamma * z[i]! - shift * scale[i]!;
+  }
 }
 
 /** Diagonal, D^{-1/2}, off-diagonal values (positive; they are subtracted) and a norm bound. */

@@ -5,3 +5,4 @@ export * from './network';
 export * from './operators';
 export * from './eigen';
 export * from './groupings';
+export * from './statistics';

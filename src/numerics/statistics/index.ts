@@ -1,0 +1,5 @@
+export { benjaminiHochberg, median } from './false-discovery';
+export { globalStatistics, type GlobalStatistic, type GlobalStatistics } from './global';
+export { localMoran, QUADRANTS, type LocalMoran } from './local';
+export { erfc, twoSidedP } from './normal';
+export { observedTies, rowStandardised, type ObservedTies } from './weights';

@@ -71,7 +71,7 @@ export function factoriseLaplacian(net: Network, budget: number): LaplacianFacto
           values.push(added);
         }
       }
-      for (let y = 0; y < list.length; y++) mark[list[y]!] = 0;
+      for (const b of list) mark[b] = 0;
       list[out] = list[list.length - 1]!;
       values[out] = values[values.length - 1]!;
       list.pop();

@@ -62,6 +62,8 @@ class Search {
   private readonly random: Random;
   private readonly limit: number;
   private top = 0;
+  /** Share done, which never falls: a probe after the search reports what the search had reached. */
+  private done = 0;
   private filter: Filter | null = null;
   /** Undefined until the gap was seen to be small; null where a factorisation is too costly. */
   private inverse: ReturnType<typeof pseudoInverse> | undefined;
@@ -103,7 +105,6 @@ class Search {
     }
     const keep = Math.min(capacity - 2, count + Math.floor(0.4 * (capacity - count)));
     let margin = 1;
-    let done = 0;
     let gathered = 0;
     const before = this.products;
     for (;;) {
@@ -112,12 +113,12 @@ class Search {
       while (!krylov.full) {
         krylov.step(this.counted(filter));
         gathered += Math.log(2 * Math.max(1, filter.at(above ?? 0)));
-        this.look(done);
+        this.look(this.done);
         if (krylov.size < count || (krylov.size % stride !== 0 && !krylov.full)) continue;
         const ritz = krylov.ritz();
         const estimates = this.estimates(ritz, count, filter);
         const bar = this.options.tolerance * this.norm * margin;
-        done = Math.max(done, share(estimates, bar, this.norm));
+        this.done = Math.max(this.done, share(estimates, bar, this.norm));
         if (above !== null && gathered > 0.5 * Math.log(op.n) + 6) {
           const bar = filter.at(above);
           const surely = ritz.values[0]! + ritz.residuals[0]! < bar;
@@ -168,7 +169,7 @@ class Search {
   ): Pairs {
     const pairs = inversePairs(this.op, solve, count, outside, above, this.random, () => {
       this.products++;
-      this.look(0.5);
+      this.look((this.done = Math.max(this.done, 0.5)));
     });
     const worst = Math.max(0, ...pairs.residuals);
     if (!(worst <= this.options.tolerance * this.norm)) throw this.failure(worst);
@@ -186,7 +187,7 @@ class Search {
     while (krylov.size < steps) {
       krylov.step((x, out) => op.combine(x, x, -1, 0, 0, out));
       this.products++;
-      this.look(0);
+      this.look(this.done);
     }
     const ritz = krylov.ritz();
     const m = krylov.size;

@@ -113,11 +113,7 @@ export function randomUnit(n: number, random: Random, basis: readonly Float64Arr
  */
 export function fixSign(x: Float64Array): void {
   let largest = 0;
-  for (let i = 0; i < x.length; i++) largest = Math.max(largest, Math.abs(x[i]!));
-  for (let i = 0; i < x.length; i++) {
-    if (Math.abs(x[i]!) >= largest * (1 - 1e-8)) {
-      if (x[i]! < 0) for (let j = 0; j < x.length; j++) x[j] = -x[j]!;
-      return;
-    }
-  }
+  for (const value of x) largest = Math.max(largest, Math.abs(value));
+  const leading = x.find((value) => Math.abs(value) >= largest * (1 - 1e-8)) ?? 0;
+  if (leading < 0) scale(x, -1);
 }

@@ -14,7 +14,7 @@ export interface Sweep {
 /** Values closer than this share of the largest magnitude count as equal; rounding must not split what symmetry ties. */
 export function tieTolerance(vector: Float64Array, relative: number): number {
   let largest = 0;
-  for (let i = 0; i < vector.length; i++) largest = Math.max(largest, Math.abs(vector[i]!));
+  for (const value of vector) largest = Math.max(largest, Math.abs(value));
   return largest * relative;
 }
 

@@ -24,7 +24,7 @@ export interface SpectralGrouping {
   /** The k eigenvalues whose vectors were used, and their residuals. */
   readonly eigenvalues: Float64Array;
   readonly residuals: Float64Array;
-  /** The first eigenvalues (up to 21, or k + 1) for the picture of gaps, to about 1e-4 of the norm or better. */
+  /** The first eigenvalues (up to 21, or k + 1) for the picture of gaps, each at most 3e-3 of the norm too high. */
   readonly overview: Float64Array;
   /** λ_{k+1} − λ_k for k = 2…20, largest gap first. */
   readonly suggestions: readonly { readonly k: number; readonly gap: number }[];
@@ -75,7 +75,7 @@ export function spectralGrouping(net: Network, options: SpectralOptions, watch?:
   // A gap needs few digits: an eigenvalue is off by the square of its residual, so a coarse solve is enough for the
   // suggestions, and only the k vectors that are used are computed to the promised accuracy.
   const count = Math.min(part.n, Math.max(21, wanted + 1));
-  const coarse = Math.max(tolerance ?? 1e-8, 1e-4);
+  const coarse = Math.max(tolerance ?? 1e-8, 3e-3);
   const overview = spectrum(part, { laplacian, tau, count, tolerance: coarse, seed }, watch);
   const suggestions = eigengaps(overview.values);
   const k = wanted || suggestions[0]!.k;

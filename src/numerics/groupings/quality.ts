@@ -143,7 +143,7 @@ export function boundaryMembers(net: Network, labels: Int32Array): BoundaryMembe
 /** One more than the largest label. */
 export function groupCount(labels: Int32Array): number {
   let largest = -1;
-  for (let i = 0; i < labels.length; i++) if (labels[i]! > largest) largest = labels[i]!;
+  for (const label of labels) if (label > largest) largest = label;
   return largest + 1;
 }
 

@@ -1,3 +1,4 @@
+import { blockRows, blockRows8 } from './block';
 import { UnanswerableError, type LaplacianKind, type Network } from '../types';
 
 /** A symmetric operator on R^n. */
@@ -75,18 +76,10 @@ export function laplacianOperator(net: Network, kind: LaplacianKind, tau?: numbe
       for (let i = 0, q = 0; i < n; i++) for (let v = 0; v < width; v++, q++) shift[v]! += scale[i]! * x[q]!;
       for (let v = 0; v < width; v++) shift[v]! *= rankOne;
     }
-    const sum = new Float64Array(width);
-    for (let i = 0; i < n; i++) {
-      sum.fill(0);
-      for (let p = offsets[i]!, end = offsets[i + 1]!; p < end; p++) {
-        const w = values[p]!;
-        const from = targets[p]! * width;
-        for (let v = 0; v < width; v++) sum[v]! += w * x[from + v]!;
-      }
-      const at = i * width;
-      for (let v = 0; v < width; v++)
-        out[at + v] = diagonal[i]! * x[at + v]! - sum[v]! - shift[v]! * scale[i]!;
-    }
+    if (width === 8) blockRows8(offsets, targets, values, diagonal, x, out);
+    else blockRows(offsets, targets, values, diagonal, x, width, out);
+    if (rankOne === 0) return;
+    for (let i = 0, q = 0; i < n; i++) for (let v = 0; v < width; v++, q++) out[q]! -= shift[v]! * scale[i]!;
   };
 
   const dense = (): Float64Array => {

@@ -6,3 +6,7 @@ export * from './operators';
 export * from './eigen';
 export * from './groupings';
 export * from './statistics';
+export * from './solvers';
+export * from './smoothers';
+export * from './filters';
+export * from './reading';

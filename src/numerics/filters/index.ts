@@ -1,0 +1,1 @@
+export { applyFilter, type ChosenFilter, type Filtered } from './chosen';

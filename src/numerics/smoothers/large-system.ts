@@ -1,0 +1,272 @@
+import { createRandom } from '../random';
+import { solveShifted } from '../solvers';
+import type { Watch } from '../types';
+import { groupColumns, type Fit, type Problem } from './model';
+import { pseudoInverse, quadraticForm, times, type PseudoInverse } from './small-matrix';
+
+const PROBES = 12;
+const DIAGONAL_PROBES = 48;
+
+interface Solved {
+  readonly f: Float64Array;
+  readonly fx: Float64Array[];
+  readonly beta: Float64Array;
+  readonly c: PseudoInverse;
+  readonly quadratic: number;
+  readonly degrees: number;
+  readonly smoothed: Float64Array;
+  residual: number;
+}
+
+/**
+ * The same smoother for large networks: conjugate gradients for the scores, Hutchinson probes (1990) for traces.
+ * `A = S + αL`; members of weight 0 are simply unobserved.
+ */
+export class LargeSystem {
+  private readonly weights: Float64Array;
+  private readonly columns: Float64Array[];
+  private readonly diagonal: Float64Array;
+  private readonly probes: Float64Array[];
+  private readonly starts = new Map<string, Float64Array>();
+
+  constructor(
+    private readonly problem: Problem,
+    zeroed: Uint8Array,
+    private readonly seed: number,
+    private readonly watch?: Watch,
+  ) {
+    this.weights = Float64Array.from(problem.s, (s, i) => (zeroed[i] === 1 ? 0 : s));
+    this.columns = groupColumns(problem.groups, this.weights);
+    this.diagonal = diagonalOf(problem);
+    const random = createRandom(seed);
+    this.probes = Array.from({ length: PROBES }, () =>
+      Float64Array.from({ length: problem.l.n }, () => (random.next() < 0.5 ? -1 : 1)),
+    );
+  }
+
+  private solve(
+    name: string,
+    b: Float64Array,
+    alpha: number,
+    tolerance: number,
+  ): { x: Float64Array; residual: number } {
+    const start = this.starts.get(name);
+    const result = solveShifted(
+      this.problem.l,
+      this.weights,
+      alpha,
+      this.diagonal,
+      b,
+      { tolerance, ...(start ? { start } : {}) },
+      this.watch,
+    );
+    this.starts.set(name, result.x);
+    return result;
+  }
+
+  private solved(alpha: number, tolerance: number): Solved {
+    const { y } = this.problem;
+    const w = this.weights;
+    const weigh = (v: Float64Array): Float64Array => v.map((one, i) => one * w[i]!);
+    let residual = 0;
+    const smooth = (name: string, v: Float64Array): Float64Array => {
+      const { x, residual: r } = this.solve(name, weigh(v), alpha, tolerance);
+      residual = Math.max(residual, r);
+      return x;
+    };
+    const fy = smooth('y', y);
+    const fx = this.columns.map((column, j) => smooth(`x${j}`, column));
+    const g = fx.length;
+    // aᵀ P b with P = W − W A⁻¹ W.
+    const product = (a: Float64Array, b: Float64Array, fb: Float64Array): number => {
+      let sum = 0;
+      for (let i = 0; i < a.length; i++) sum += w[i]! * a[i]! * (b[i]! - fb[i]!);
+      return sum;
+    };
+    const xpx = new Float64Array(g * g);
+    for (let i = 0; i < g; i++)
+      for (let j = 0; j < g; j++) xpx[i * g + j] = product(this.columns[i]!, this.columns[j]!, fx[j]!);
+    for (let i = 0; i < g; i++)
+      for (let j = 0; j < i; j++) {
+        const mean = (xpx[i * g + j]! + xpx[j * g + i]!) / 2;
+        xpx[i * g + j] = mean;
+        xpx[j * g + i] = mean;
+      }
+    const xpy = Float64Array.from(this.columns, (column) => product(column, y, fy));
+    const c = pseudoInverse(xpx, g);
+    const beta = times(c.matrix, xpy);
+    const quadratic = Math.max(1e-300, product(y, y, fy) - beta.reduce((sum, b, j) => sum + b * xpy[j]!, 0));
+    const f = fy.map((one, i) => one - fx.reduce((sum, column, j) => sum + column[i]! * beta[j]!, 0));
+    const smoothed = f.map(
+      (one, i) => one + this.columns.reduce((sum, column, j) => sum + column[i]! * beta[j]!, 0),
+    );
+    const observed = w.reduce((sum, one) => sum + (one > 0 ? 1 : 0), 0);
+    return {
+      f,
+      fx,
+      beta,
+      c,
+      quadratic,
+      degrees: observed - this.problem.nullity - c.rank,
+      smoothed,
+      residual,
+    };
+  }
+
+  private energy(a: Float64Array, b: Float64Array): number {
+    const out = new Float64Array(a.length);
+    this.problem.l.multiply(a, out);
+    return out.reduce((sum, one, i) => sum + one * b[i]!, 0);
+  }
+
+  /** tr A⁻¹S, with the same probes for every α, so that it is a smooth function of α. */
+  private trace(alpha: number, tolerance: number): number {
+    const root = this.weights.map(Math.sqrt);
+    let sum = 0;
+    this.probes.forEach((probe, k) => {
+      const b = probe.map((one, i) => one * root[i]!);
+      const { x } = this.solve(`p${k}`, b, alpha, tolerance);
+      for (let i = 0; i < b.length; i++) sum += b[i]! * x[i]!;
+    });
+    return sum / this.probes.length;
+  }
+
+  /** Derivative of −2 log restricted likelihood by log α; its root is the estimate. */
+  score(alpha: number): number {
+    const { f, fx, c, quadratic, degrees } = this.solved(alpha, 1e-6);
+    const g = fx.length;
+    let levels = 0;
+    for (let i = 0; i < g; i++)
+      for (let j = 0; j < g; j++) levels += c.matrix[i * g + j]! * this.energy(fx[i]!, fx[j]!);
+    const fit = (degrees * alpha * this.energy(f, f)) / quadratic;
+    return fit + this.problem.nullity - this.trace(alpha, 1e-5) + alpha * levels;
+  }
+
+  /** Generalised cross-validation for a smoother without levels. */
+  crossValidation(alpha: number): number {
+    const { smoothed } = this.solved(alpha, 1e-6);
+    const { y } = this.problem;
+    let rss = 0;
+    let count = 0;
+    this.weights.forEach((w, i) => {
+      if (w === 0) return;
+      rss += w * (y[i]! - smoothed[i]!) ** 2;
+      count++;
+    });
+    const free = count - this.trace(alpha, 1e-5);
+    return (count * rss) / (free * free);
+  }
+
+  /** Diagonal of A⁻¹: N, N² in closed form, the rest of the Neumann series by probes (a control variate). */
+  private inverseDiagonal(alpha: number): Float64Array {
+    const { l } = this.problem;
+    const n = l.n;
+    const scale = this.diagonal.map((d, i) => 1 / Math.sqrt(this.weights[i]! + alpha * d));
+    const squares = this.neighbourSquares(alpha, scale);
+    const random = createRandom(this.seed + 1);
+    const estimate = new Float64Array(n);
+    const times1 = (v: Float64Array): Float64Array => {
+      // N v = v − D^{-1/2} A D^{-1/2} v
+      const inside = v.map((one, i) => one * scale[i]!);
+      const out = new Float64Array(n);
+      l.multiply(inside, out);
+      return v.map((one, i) => one - scale[i]! * (this.weights[i]! * inside[i]! + alpha * out[i]!));
+    };
+    for (let k = 0; k < DIAGONAL_PROBES; k++) {
+      this.watch?.progress?.(0.7 + (0.2 * k) / DIAGONAL_PROBES, 'Weighing each member’s own score');
+      const z = Float64Array.from({ length: n }, () => (random.next() < 0.5 ? -1 : 1));
+      const { x } = solveShifted(
+        l,
+        this.weights,
+        alpha,
+        this.diagonal,
+        z.map((one, i) => one / scale[i]!),
+        { tolerance: 1e-5 },
+        this.watch,
+      );
+      const n1 = times1(z);
+      const n2 = times1(n1);
+      for (let i = 0; i < n; i++)
+        estimate[i]! += (z[i]! * (x[i]! / scale[i]! - z[i]! - n1[i]! - n2[i]!)) / DIAGONAL_PROBES;
+    }
+    // All terms of the series have a non-negative diagonal, so the closed part is a lower bound.
+    return estimate.map((rest, i) => scale[i]! ** 2 * (1 + squares[i]! + Math.max(0, rest)));
+  }
+
+  private neighbourSquares(alpha: number, scale: Float64Array): Float64Array {
+    const { network, kind, scale: own } = this.problem.l;
+    return Float64Array.from({ length: network.n }, (_, i) => {
+      let sum = 0;
+      for (let k = network.offsets[i]!; k < network.offsets[i + 1]!; k++) {
+        const j = network.targets[k]!;
+        const entry =
+          kind === 'combinatorial' ? network.weights[k]! : network.weights[k]! * own[i]! * own[j]!;
+        sum += (alpha * entry * scale[i]! * scale[j]!) ** 2;
+      }
+      return sum;
+    });
+  }
+
+  /** Exact [A⁻¹]_ii of some members, by solving. */
+  exactDiagonal(alpha: number, members: readonly number[]): Float64Array {
+    return Float64Array.from(members, (i, at) => {
+      if (at % 8 === 0)
+        this.watch?.progress?.(0.9 + (0.08 * at) / members.length, 'Checking members near the line exactly');
+      const b = new Float64Array(this.problem.l.n);
+      b[i] = 1;
+      return solveShifted(
+        this.problem.l,
+        this.weights,
+        alpha,
+        this.diagonal,
+        b,
+        { tolerance: 1e-8 },
+        this.watch,
+      ).x[i]!;
+    });
+  }
+
+  fit(alpha: number): Fit & { readonly refine: (members: readonly number[]) => void } {
+    const solved = this.solved(alpha, 1e-10);
+    const { fx, c, quadratic, degrees, smoothed, residual } = solved;
+    const inverse = this.inverseDiagonal(alpha);
+    const n = smoothed.length;
+    const variance = new Float64Array(n);
+    const leverage = new Float64Array(n);
+    const exact = new Uint8Array(n);
+    const set = (i: number, own: number): void => {
+      const r = this.columns.map((column, j) => column[i]! - fx[j]![i]!);
+      variance[i] = own + quadraticForm(c.matrix, r);
+      leverage[i] = Math.min(this.weights[i]! * variance[i], 1 - 1e-6);
+    };
+    inverse.forEach((own, i) => set(i, own));
+    return {
+      alpha,
+      smoothed,
+      variance,
+      leverage,
+      exact,
+      quadratic,
+      degrees,
+      residual,
+      refine: (members) => {
+        const own = this.exactDiagonal(alpha, members);
+        members.forEach((i, at) => {
+          set(i, own[at]!);
+          exact[i] = 1;
+        });
+      },
+    };
+  }
+}
+
+/** Diagonal of the chosen Laplacian. */
+function diagonalOf({ l }: Problem): Float64Array {
+  const { network, kind, tau, n } = l;
+  return Float64Array.from({ length: n }, (_, i) => {
+    const d = network.strength[i]!;
+    if (kind === 'combinatorial') return d;
+    if (kind === 'normalised') return d > 0 ? 1 : 0;
+    return 1 - tau / n / (d + tau);
+  });
+}

@@ -1,0 +1,209 @@
+import { median } from '../statistics';
+import type { LaplacianKind, Watch } from '../types';
+import { UnanswerableError } from '../types';
+import { exactBasis } from './exact-basis';
+import { ExactSystem } from './exact-system';
+import { LargeSystem } from './large-system';
+import type { Fit, Problem } from './model';
+import { searchStrength } from './search';
+
+/** Up to this many members everything is exact. */
+export const EXACT_UP_TO = 2_000;
+/** Members whose standardised departure is beyond this get weight 0 in the robust rounds. */
+const WILD = 2.5;
+const ROUNDS = 3;
+/** Members whose leverage is made exact on the large path, at most. */
+const REFINED = 400;
+
+export type Strength =
+  | { readonly kind: 'given'; readonly alpha: number }
+  | { readonly kind: 'gcv' }
+  | { readonly kind: 'restricted-likelihood' };
+
+export interface Smoothing extends Fit {
+  readonly sigma: number;
+  readonly sigmaLikelihood: number;
+  readonly departure: Float64Array;
+  /** Standardised departure; NaN for missing members. */
+  readonly z: Float64Array;
+  /** 1 for members whose score had no part in the fit. */
+  readonly zeroed: Uint8Array;
+  readonly notes: readonly string[];
+}
+
+/** Departures of a fit: left-out for members with weight, plain for those without, who were left out by the fit. */
+function standardise(
+  problem: Problem,
+  fit: Fit,
+  zeroed: Uint8Array,
+): Pick<Smoothing, 'departure' | 'z' | 'sigma' | 'sigmaLikelihood'> {
+  const { y, s, observed } = problem;
+  const n = y.length;
+  const departure = new Float64Array(n).fill(NaN);
+  const z = new Float64Array(n).fill(NaN);
+  for (let i = 0; i < n; i++) {
+    if (observed[i] === 0) continue;
+    const rest = y[i]! - fit.smoothed[i]!;
+    const free = 1 - fit.leverage[i]!;
+    const out = zeroed[i] === 1;
+    // A score that is its own only evidence, as without ties, cannot be left out.
+    if (!out && free < 1e-9) continue;
+    departure[i] = out ? rest : rest / free;
+    z[i] = (Math.sqrt(s[i]!) * rest) / Math.sqrt(out ? 1 + s[i]! * fit.variance[i]! : free);
+  }
+  const sigma = 1.4826 * median(z.map(Math.abs));
+  const sigmaLikelihood = Math.sqrt(fit.quadratic / Math.max(1, fit.degrees));
+  const used = sigma > 0 ? sigma : sigmaLikelihood;
+  for (let i = 0; i < n; i++) z[i] = z[i]! / used;
+  return { departure, z, sigma: used, sigmaLikelihood };
+}
+
+/** Members that the next round leaves out; never all of a component or of a small problem. */
+function wild(z: Float64Array, observed: Uint8Array): Uint8Array {
+  const out = Uint8Array.from(z, (one) => (Math.abs(one) > WILD ? 1 : 0));
+  const count = out.reduce((sum, one) => sum + one, 0);
+  const all = observed.reduce((sum, one) => sum + one, 0);
+  return count > 0.2 * all ? new Uint8Array(z.length) : out;
+}
+
+const rangeFor = (kind: LaplacianKind, strength: Strength['kind']): [number, number] =>
+  strength === 'gcv' && kind === 'combinatorial' ? [-4, 4] : [-3, 5];
+
+const NOTES = {
+  low: 'The fit found no stretch over which neighbours’ scores agree; the smoothed score stays close to the recorded one.',
+  high: 'Beyond the levels of the groups, neighbours do not resemble each other in this attribute.',
+} as const;
+
+/**
+ * Smooths one attribute: strength given, by generalised cross-validation, or by restricted maximum likelihood with
+ * robust rounds (numerics.md, "Readings").
+ * @throws UnanswerableError with fewer than three observed members
+ */
+export function smooth(
+  problem: Problem,
+  strength: Strength,
+  robust: boolean,
+  seed: number,
+  watch?: Watch,
+): Smoothing {
+  const observed = problem.observed.reduce((sum, one) => sum + one, 0);
+  if (observed < 3)
+    throw new UnanswerableError(
+      'too-few-observed',
+      `Only ${observed} members have a value; at least 3 are needed.`,
+    );
+  return problem.l.n <= EXACT_UP_TO
+    ? smoothExactly(problem, strength, robust, watch)
+    : smoothLarge(problem, strength, robust, seed, watch);
+}
+
+function smoothExactly(problem: Problem, strength: Strength, robust: boolean, watch?: Watch): Smoothing {
+  const basis = exactBasis(
+    problem,
+    watch && { ...watch, progress: (done, step) => watch.progress?.(0.7 * done, step) },
+  );
+  const [low, high] = rangeFor(problem.l.kind, strength.kind);
+  let zeroed: Uint8Array = new Uint8Array(problem.l.n);
+  let end: 'low' | 'high' | null = null;
+  const choose = (system: ExactSystem): number => {
+    if (strength.kind === 'given') return strength.alpha;
+    const found = searchStrength(
+      (alpha) => (strength.kind === 'gcv' ? system.crossValidation(alpha) : system.criterion(alpha)),
+      low,
+      high,
+    );
+    end = found.end;
+    return found.alpha;
+  };
+  const rounds = robust ? ROUNDS : 0;
+  for (let round = 0; round < rounds; round++) {
+    watch?.progress?.(0.7 + 0.05 * round, 'Setting wild scores aside');
+    const system = new ExactSystem(problem, basis, zeroed);
+    const fit = system.fit(choose(system));
+    const next = wild(standardise(problem, fit, zeroed).z, problem.observed);
+    const same = next.every((one, i) => one === zeroed[i]);
+    zeroed = next;
+    if (same) break;
+  }
+  watch?.progress?.(0.9, 'Fitting');
+  const system = new ExactSystem(problem, basis, zeroed);
+  const fit = system.fit(choose(system));
+  const notes = end && strength.kind !== 'given' ? [NOTES[end]] : [];
+  return { ...fit, ...standardise(problem, fit, zeroed), zeroed, notes };
+}
+
+function smoothLarge(
+  problem: Problem,
+  strength: Strength,
+  robust: boolean,
+  seed: number,
+  watch?: Watch,
+): Smoothing {
+  const [low, high] = rangeFor(problem.l.kind, strength.kind);
+  let zeroed: Uint8Array = new Uint8Array(problem.l.n);
+  let end: 'low' | 'high' | null = null;
+  const choose = (system: LargeSystem): number => {
+    if (strength.kind === 'given') return strength.alpha;
+    const found =
+      strength.kind === 'gcv'
+        ? coarseMinimum((alpha) => system.crossValidation(alpha), low, high, watch)
+        : rootOf((alpha) => system.score(alpha), low, high, watch);
+    end = found.end;
+    return found.alpha;
+  };
+  let alpha = choose(new LargeSystem(problem, zeroed, seed, watch));
+  for (let round = 0; robust && round < ROUNDS; round++) {
+    watch?.progress?.(0.5 + 0.05 * round, 'Setting wild scores aside');
+    const fit = new LargeSystem(problem, zeroed, seed, watch).fit(alpha);
+    const next = wild(standardise(problem, fit, zeroed).z, problem.observed);
+    const same = next.every((one, i) => one === zeroed[i]);
+    zeroed = next;
+    // The strength moves most when the wild scores first go.
+    if (round === 0) alpha = choose(new LargeSystem(problem, zeroed, seed, watch));
+    if (same) break;
+  }
+  const fit = new LargeSystem(problem, zeroed, seed, watch).fit(alpha);
+  const first = standardise(problem, fit, zeroed);
+  const near = Array.from(first.z.keys())
+    .filter((i) => Math.abs(first.z[i]!) > 2.2)
+    .sort((a, b) => Math.abs(first.z[b]!) - Math.abs(first.z[a]!))
+    .slice(0, REFINED);
+  fit.refine(near);
+  const notes = [
+    ...(end && strength.kind !== 'given' ? [NOTES[end]] : []),
+    `Leverages were estimated with seeded probes, and solved exactly for the ${near.length} members that stand out most.`,
+  ];
+  return { ...fit, ...standardise(problem, fit, zeroed), zeroed, notes };
+}
+
+type Found = { alpha: number; end: 'low' | 'high' | null };
+
+/** Root of an increasing-through-zero derivative on log₁₀ α, by bisection to 2 %. */
+function rootOf(score: (alpha: number) => number, low: number, high: number, watch?: Watch): Found {
+  let a = low;
+  let b = high;
+  if (score(10 ** a) > 0) return { alpha: 10 ** a, end: 'low' };
+  if (score(10 ** b) < 0) return { alpha: 10 ** b, end: 'high' };
+  for (let step = 0; b - a > 0.01; step++) {
+    watch?.progress?.(Math.min(0.5, 0.05 * step), 'Estimating how far neighbours resemble each other');
+    const middle = (a + b) / 2;
+    if (score(10 ** middle) > 0) b = middle;
+    else a = middle;
+  }
+  return { alpha: 10 ** ((a + b) / 2), end: null };
+}
+
+/** Minimum on half decades, refined by a parabola. */
+function coarseMinimum(of: (alpha: number) => number, low: number, high: number, watch?: Watch): Found {
+  const values: number[] = [];
+  for (let k = 0; low + k / 2 <= high; k++) {
+    watch?.progress?.((0.5 * k) / (2 * (high - low)), 'Choosing the strength');
+    values.push(of(10 ** (low + k / 2)));
+  }
+  const best = values.indexOf(Math.min(...values));
+  if (best === 0) return { alpha: 10 ** low, end: 'low' };
+  if (best === values.length - 1) return { alpha: 10 ** high, end: 'high' };
+  const [before, here, after] = [values[best - 1]!, values[best]!, values[best + 1]!];
+  const shift = (before - after) / (2 * (before - 2 * here + after));
+  return { alpha: 10 ** (low + (best + (Number.isFinite(shift) ? shift : 0)) / 2), end: null };
+}

@@ -1,0 +1,2 @@
+export { cholesky, choleskySolve } from './cholesky';
+export { solveShifted, type SolveResult } from './conjugate-gradient';

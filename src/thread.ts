@@ -7,6 +7,7 @@ const tasks: Readonly<Record<string, () => Promise<ThreadTask>>> = {
   shape: async () => (await import('./features/network/compute')).computeShape,
   grouping: async () => (await import('./features/groupings/compute')).computeGrouping,
   'smoother-groups': async () => (await import('./features/groupings/compute')).computeSmootherGroups,
+  reading: async () => (await import('./features/readings/compute')).computeReading,
 };
 
 const { task, input, stop } = workerData as ThreadRequest;

@@ -154,8 +154,10 @@ describe('Tikhonov with α = 1 on the karate club', () => {
   test('the picture of the warp holds all the variation', () => {
     expect(found.warp!.frequencies).toBe(34);
     expect(found.warp!.bands.reduce((sum, band) => sum + band.energy, 0)).toBeCloseTo(1, 8);
-    for (const band of found.warp!.bands)
-      expect(band.kept / Math.max(band.energy, 1e-300)).toBeCloseTo(1 / (1 + band.from) ** 2, 4);
+    // Tikhonov answers 1 / (1 + αλ) at λ; about the mean the constant (λ = 0) carries nothing.
+    const carrying = found.warp!.bands.filter((band) => band.energy > 1e-9);
+    expect(carrying.length).toBeGreaterThan(20);
+    for (const band of carrying) expect(band.kept / band.energy).toBeCloseTo(1 / (1 + band.from) ** 2, 4);
   });
 });
 

@@ -1,0 +1,4 @@
+export { readingFilterSchema, type ReadingFilter } from './filter';
+export { readingOperations } from './operations';
+export type { MakeReading, ReadingLine, ReadingMemberView, ReadingView, Warp } from './readings';
+export { filterWords, THRESHOLD } from './words';

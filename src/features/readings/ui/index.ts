@@ -1,0 +1,2 @@
+export { ReadingApp, type ReadingProps } from './ReadingApp';
+export { ReadingsApp, type ReadingsProps } from './ReadingsApp';

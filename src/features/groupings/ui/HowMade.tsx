@@ -32,7 +32,7 @@ const exact = (value: number | null): string =>
     ? '–'
     : value !== 0 && Math.abs(value) < 1e-3
       ? value.toExponential(2)
-      : formatNumber(value, 4);
+      : formatNumber(value, Number.isInteger(value) ? 0 : 4);
 
 /** Everything needed to do it again. */
 export function HowMade({ view }: { view: GroupingView }) {

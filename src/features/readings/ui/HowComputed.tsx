@@ -8,7 +8,7 @@ const exact = (value: number | null | undefined): string =>
     ? '–'
     : value !== 0 && (Math.abs(value) < 1e-3 || Math.abs(value) >= 1e6)
       ? value.toExponential(2)
-      : formatNumber(value, 4);
+      : formatNumber(value, Number.isInteger(value) ? 0 : 4);
 
 const SOURCES: [string, string][] = [
   ['Left-out departure', 'Exact for a linear smoother: (y − ŷ) / (1 − leverage)'],

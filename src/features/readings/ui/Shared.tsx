@@ -11,8 +11,8 @@ function verdict({ value, expectation, p }: Moments): string {
   if (value === null || expectation === null || p === null) return 'Could not be told.';
   if (p >= 0.05) return 'No more alike along ties than chance would make them.';
   return value > expectation
-    ? 'Tied members resemble each other far more often than chance would have it.'
-    : 'Tied members differ from each other more often than chance would have it.';
+    ? 'Tied members resemble each other more than chance would have it.'
+    : 'Tied members differ from each other more than chance would have it.';
 }
 
 /** Moran's I and Geary's C with what chance alone would give. */

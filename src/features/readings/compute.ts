@@ -81,7 +81,10 @@ export function computeReading({ net, filter, ...input }: ReadingInput, watch?: 
   };
 }
 
-type Both<T> = { row: T; raw: T };
+interface Both<T> {
+  row: T;
+  raw: T;
+}
 type Moments = NonNullable<ReadingSummaryResult['moran']>['row'];
 
 const moments = ({ row, raw }: Both<Parameters<typeof withNulls>[0]>): Both<Moments> => ({

@@ -2,7 +2,7 @@ import type { Network } from '../types';
 
 /** A factor of the combinatorial Laplacian of a connected network, by which L z = b is solved for b ⊥ 1. */
 export interface LaplacianFactor {
-  /** z with L z = b, up to a constant; b must add up to 0. `z` may be the same array as `b`. */
+  /** z with (L + G) z = b; without G up to a constant, and b must add up to 0. `z` may be the same array as `b`. */
   solve(b: Float64Array, z: Float64Array): void;
   /** Entries of the factor. */
   readonly fill: number;
@@ -13,10 +13,15 @@ export interface LaplacianFactor {
  * in which every Schur complement is a Laplacian again, so that no subtraction occurs and even tiny eigenvalues keep
  * their digits. Cheap on rings, trees, grids and other thin networks; on social networks the fill explodes.
  *
+ * @param ground a diagonal G ≥ 0 to be added (ties to a grounded node), or null
  * @param budget ceiling on elementary operations
  * @returns null when the budget ran out, or is seen to
  */
-export function factoriseLaplacian(net: Network, budget: number): LaplacianFactor | null {
+export function factoriseLaplacian(
+  net: Network,
+  ground: Float64Array | null,
+  budget: number,
+): LaplacianFactor | null {
   const { n } = net;
   const neighbours: number[][] = [];
   const weights: number[][] = [];
@@ -31,6 +36,7 @@ export function factoriseLaplacian(net: Network, budget: number): LaplacianFacto
     weights.push(Array.from(net.weights.subarray(net.offsets[i], net.offsets[i + 1])));
   }
   for (let i = n - 1; i >= 0; i--) file(i);
+  const grounded = ground?.slice() ?? new Float64Array(n);
   const gone = new Uint8Array(n);
   const mark = new Int32Array(n);
   const order = new Int32Array(n);
@@ -48,13 +54,14 @@ export function factoriseLaplacian(net: Network, budget: number): LaplacianFacto
     }
     const around = neighbours[v]!;
     const share = weights[v]!;
-    let pivot = 0;
+    let pivot = grounded[v]!;
     for (const w of share) pivot += w;
     order[k] = v;
     pivots[k] = pivot;
     gone[v] = 1;
     for (let x = 0; x < around.length; x++) {
       const a = around[x]!;
+      grounded[a]! += (share[x]! * grounded[v]!) / pivot;
       const list = neighbours[a]!;
       const values = weights[a]!;
       work += list.length + around.length;
@@ -115,10 +122,9 @@ function flatten(
         const value = y[k]!;
         for (let p = offsets[k]!; p < offsets[k + 1]!; p++) y[columns[p]!]! += values[p]! * value;
       }
-      // The last pivot is 0 (the null vector); its unknown is free and set to 0.
-      y[n - 1] = 0;
-      for (let k = n - 2; k >= 0; k--) {
-        let value = y[k]! / pivots[k]!;
+      for (let k = n - 1; k >= 0; k--) {
+        // Without ground the last pivot is 0 (the null vector); its unknown is free and set to 0.
+        let value = pivots[k]! > 0 ? y[k]! / pivots[k]! : 0;
         for (let p = offsets[k]!; p < offsets[k + 1]!; p++) value += values[p]! * y[columns[p]!]!;
         y[k] = value;
       }

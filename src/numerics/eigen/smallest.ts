@@ -3,7 +3,7 @@ import { createRandom, type Random } from '../random';
 import { CancelledError, NotConvergedError, type Watch } from '../types';
 import { chebyshevFilter, type Filter } from './filter';
 import { chooseDegree, nextCut } from './filter-choice';
-import { inversePairs, pseudoInverse } from './inverse';
+import { inversePairs, shiftedInverse, type Inverse } from './inverse';
 import { Krylov } from './krylov';
 import { rayleighRitz, type Pairs } from './rayleigh-ritz';
 import { best, share } from './search-helpers';
@@ -66,7 +66,7 @@ class Search {
   private done = 0;
   private filter: Filter | null = null;
   /** Undefined until the gap was seen to be small; null where a factorisation is too costly. */
-  private inverse: ReturnType<typeof pseudoInverse> | undefined;
+  private inverse: Inverse | null | undefined;
 
   constructor(
     private readonly op: LaplacianOperator,
@@ -80,7 +80,10 @@ class Search {
   /** Is there an eigenvalue below `bound` in the complement of `outside`? Returns that pair, or null. */
   probe(bound: number, outside: readonly Float64Array[]): Pairs | null {
     // With the inverse λ is known to many digits; otherwise a Ritz value may be off by its residual.
-    const slack = Math.max(1e-8 * bound, this.inverse ? 0 : this.options.tolerance * this.norm);
+    const slack = Math.max(
+      1e-8 * (bound - (this.inverse?.shift ?? 0)),
+      this.inverse ? 0 : this.options.tolerance * this.norm,
+    );
     const pairs = this.find(1, outside, bound - slack);
     return pairs.values.length > 0 && pairs.values[0]! < bound - slack ? pairs : null;
   }
@@ -141,7 +144,7 @@ class Search {
         if (!(margin > 1e-12)) throw this.failure(worst);
       }
       if (this.inverse === undefined && this.products > patience) {
-        this.inverse = pseudoInverse(op);
+        this.inverse = shiftedInverse(op);
         if (this.inverse) return this.byInverse(this.inverse, count, outside, above);
       }
       const ritz = krylov.ritz();
@@ -162,12 +165,12 @@ class Search {
   }
 
   private byInverse(
-    solve: (x: Float64Array, out: Float64Array) => void,
+    inverse: Inverse,
     count: number,
     outside: readonly Float64Array[],
     above: number | null,
   ): Pairs {
-    const pairs = inversePairs(this.op, solve, count, outside, above, this.random, () => {
+    const pairs = inversePairs(this.op, inverse, count, outside, above, this.random, () => {
       this.products++;
       this.look((this.done = Math.max(this.done, 0.5)));
     });
@@ -222,7 +225,7 @@ class Search {
   }
 
   private makeFilter(low: number, wanted: number, cut: number, capacity: number): Filter {
-    const a = Math.min(0.9 * this.top, Math.max(cut, 1.1 * wanted, 1e-15 * this.top));
+    const a = Math.min(0.9 * this.top, Math.max(cut, wanted + 0.1 * (wanted - low), 1e-12 * this.top));
     return chebyshevFilter(this.op, a, this.top, low, chooseDegree(this.op, low, a, this.top, capacity));
   }
 

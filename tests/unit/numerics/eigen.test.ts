@@ -88,6 +88,15 @@ describe('closed forms, large networks', () => {
     expectSound(found);
   });
 
+  it('a ring of 20,000, regularised with τ = 2: 1 − 2 cos θ / (2 + τ)', () => {
+    const found = spectrum(ring(20_000), { laplacian: 'regularised', count: 5 });
+    for (let l = 1; l < 5; l++) {
+      const exact = 0.5 + Math.sin((Math.PI * Math.ceil(l / 2)) / 20_000) ** 2;
+      expect(Math.abs(found.values[l]! - exact)).toBeLessThan(1e-14);
+    }
+    expectSound(found);
+  });
+
   it('a path of 3,000, normalised', () => {
     const found = spectrum(path(3000), { laplacian: 'normalised', count: 5 });
     for (let l = 1; l < 5; l++)

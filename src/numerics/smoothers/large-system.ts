@@ -1,3 +1,4 @@
+import { components } from '../network';
 import { createRandom } from '../random';
 import { solveShifted } from '../solvers';
 import type { Watch } from '../types';
@@ -6,6 +7,9 @@ import { pseudoInverse, quadraticForm, times, type PseudoInverse } from './small
 
 const PROBES = 12;
 const DIAGONAL_PROBES = 48;
+/** Streams of their own: probes must not repeat draws that made the data, as a demo with the same seed would. */
+const PROBE_STREAM = 0x5bd1e995;
+const DIAGONAL_STREAM = 0x2c1b3c6d;
 
 interface Solved {
   readonly f: Float64Array;
@@ -38,7 +42,7 @@ export class LargeSystem {
     this.weights = Float64Array.from(problem.s, (s, i) => (zeroed[i] === 1 ? 0 : s));
     this.columns = groupColumns(problem.groups, this.weights);
     this.diagonal = diagonalOf(problem);
-    const random = createRandom(seed);
+    const random = createRandom(seed ^ PROBE_STREAM);
     this.probes = Array.from({ length: PROBES }, () =>
       Float64Array.from({ length: problem.l.n }, () => (random.next() < 0.5 ? -1 : 1)),
     );
@@ -119,16 +123,47 @@ export class LargeSystem {
     return out.reduce((sum, one, i) => sum + one * b[i]!, 0);
   }
 
-  /** tr A⁻¹S, with the same probes for every α, so that it is a smooth function of α. */
-  private trace(alpha: number, tolerance: number): number {
-    const root = this.weights.map(Math.sqrt);
+  /**
+   * tr A⁻¹S. Exact on the span of the levels (or of the constants), where most of it lies when smoothing is strong;
+   * the rest by probes that are kept out of that span, the same for every α, so that it is a smooth function of α.
+   */
+  private trace(alpha: number, fx: readonly Float64Array[], tolerance: number): number {
+    const w = this.weights;
+    const root = w.map(Math.sqrt);
+    const spans = fx.length > 0 ? this.columns : this.constants();
     let sum = 0;
-    this.probes.forEach((probe, k) => {
-      const b = probe.map((one, i) => one * root[i]!);
-      const { x } = this.solve(`p${k}`, b, alpha, tolerance);
-      for (let i = 0; i < b.length; i++) sum += b[i]! * x[i]!;
+    const directions = spans.map((column, j) => {
+      let size = 0;
+      let inside = 0;
+      column.forEach((one, i) => {
+        size += w[i]! * one * one;
+        // A⁻¹S of a constant is that constant.
+        inside += w[i]! * one * (fx[j]?.[i] ?? one);
+      });
+      if (size > 0) sum += inside / size;
+      return column.map((one, i) => (size > 0 ? (root[i]! * one) / Math.sqrt(size) : 0));
     });
-    return sum / this.probes.length;
+    let rest = 0;
+    this.probes.forEach((probe, k) => {
+      const z = Float64Array.from(probe);
+      for (const q of directions) {
+        const along = q.reduce((total, one, i) => total + one * probe[i]!, 0);
+        for (let i = 0; i < z.length; i++) z[i]! -= along * q[i]!;
+      }
+      const b = z.map((one, i) => one * root[i]!);
+      const { x } = this.solve(`p${k}`, b, alpha, tolerance);
+      for (let i = 0; i < b.length; i++) rest += b[i]! * x[i]!;
+    });
+    return sum + rest / this.probes.length;
+  }
+
+  /** One constant for each of the larger components; the small ones are left to the probes. */
+  private constants(): Float64Array[] {
+    const { labels, sizes } = components(this.problem.l.network);
+    const large = Array.from(sizes.keys()).filter(
+      (c) => sizes[c]! > 20 && this.problem.l.kind === 'combinatorial',
+    );
+    return large.slice(0, 32).map((c) => Float64Array.from(labels, (one) => (one === c ? 1 : 0)));
   }
 
   /** Derivative of −2 log restricted likelihood by log α; its root is the estimate. */
@@ -139,12 +174,12 @@ export class LargeSystem {
     for (let i = 0; i < g; i++)
       for (let j = 0; j < g; j++) levels += c.matrix[i * g + j]! * this.energy(fx[i]!, fx[j]!);
     const fit = (degrees * alpha * this.energy(f, f)) / quadratic;
-    return fit + this.problem.nullity - this.trace(alpha, 1e-5) + alpha * levels;
+    return fit + this.problem.nullity - this.trace(alpha, fx, 1e-5) + alpha * levels;
   }
 
   /** Generalised cross-validation for a smoother without levels. */
   crossValidation(alpha: number): number {
-    const { smoothed } = this.solved(alpha, 1e-6);
+    const { smoothed, fx } = this.solved(alpha, 1e-6);
     const { y } = this.problem;
     let rss = 0;
     let count = 0;
@@ -153,7 +188,7 @@ export class LargeSystem {
       rss += w * (y[i]! - smoothed[i]!) ** 2;
       count++;
     });
-    const free = count - this.trace(alpha, 1e-5);
+    const free = count - this.trace(alpha, fx, 1e-5);
     return (count * rss) / (free * free);
   }
 
@@ -163,7 +198,7 @@ export class LargeSystem {
     const n = l.n;
     const scale = this.diagonal.map((d, i) => 1 / Math.sqrt(this.weights[i]! + alpha * d));
     const squares = this.neighbourSquares(alpha, scale);
-    const random = createRandom(this.seed + 1);
+    const random = createRandom(this.seed ^ DIAGONAL_STREAM);
     const estimate = new Float64Array(n);
     const times1 = (v: Float64Array): Float64Array => {
       // N v = v − D^{-1/2} A D^{-1/2} v

@@ -23,7 +23,7 @@ export function pseudoInverse(a: Float64Array, g: number): PseudoInverse {
   let rank = 0;
   let logDeterminant = 0;
   realEigenvalues.forEach((value, k) => {
-    if (value <= 1e-9 * most) return;
+    if (value <= 1e-7 * most) return;
     rank++;
     logDeterminant += Math.log(value);
     for (let i = 0; i < g; i++)

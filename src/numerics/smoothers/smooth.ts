@@ -139,7 +139,8 @@ function smoothLarge(
   seed: number,
   watch?: Watch,
 ): Smoothing {
-  const [low, high] = rangeFor(problem.l.kind, strength.kind);
+  const [low, high] =
+    strength.kind === 'restricted-likelihood' ? [-1.5, 4] : rangeFor(problem.l.kind, strength.kind);
   let zeroed: Uint8Array = new Uint8Array(problem.l.n);
   let end: 'low' | 'high' | null = null;
   const choose = (system: LargeSystem): number => {
@@ -178,14 +179,35 @@ function smoothLarge(
 
 type Found = { alpha: number; end: 'low' | 'high' | null };
 
-/** Root of an increasing-through-zero derivative on log₁₀ α, by bisection to 2 %. */
+/**
+ * Minimum of a criterion of which only the derivative by log α is known, with some noise: the derivative is summed
+ * up over half decades, and the lowest point is refined by bisection to 2 %.
+ */
 function rootOf(score: (alpha: number) => number, low: number, high: number, watch?: Watch): Found {
-  let a = low;
-  let b = high;
-  if (score(10 ** a) > 0) return { alpha: 10 ** a, end: 'low' };
-  if (score(10 ** b) < 0) return { alpha: 10 ** b, end: 'high' };
-  for (let step = 0; b - a > 0.01; step++) {
-    watch?.progress?.(Math.min(0.5, 0.05 * step), 'Estimating how far neighbours resemble each other');
+  const places: number[] = [];
+  const slopes: number[] = [];
+  for (let place = low; place <= high + 1e-9; place += 0.5) {
+    watch?.progress?.(
+      (0.4 * (place - low)) / (high - low),
+      'Estimating how far neighbours resemble each other',
+    );
+    places.push(place);
+    slopes.push(score(10 ** place));
+  }
+  let criterion = 0;
+  let best = 0;
+  let lowest = 0;
+  for (let k = 1; k < places.length; k++) {
+    criterion += (slopes[k - 1]! + slopes[k]!) / 2;
+    if (criterion < lowest) {
+      lowest = criterion;
+      best = k;
+    }
+  }
+  if (best === 0) return { alpha: 10 ** low, end: 'low' };
+  if (best === places.length - 1) return { alpha: 10 ** high, end: 'high' };
+  let [a, b] = slopes[best]! > 0 ? [places[best - 1]!, places[best]!] : [places[best]!, places[best + 1]!];
+  while (b - a > 0.01) {
     const middle = (a + b) / 2;
     if (score(10 ** middle) > 0) b = middle;
     else a = middle;

@@ -1,21 +1,29 @@
 import type { APIRoute } from 'astro';
+import { accountOperations } from '@/features/account';
 import { caseOperations } from '@/features/cases';
 import { groupingOperations } from '@/features/groupings';
+import { importOperations } from '@/features/imports';
 import { jobOperations } from '@/features/jobs';
 import { memberOperations } from '@/features/members';
+import { networkOperations } from '@/features/network';
 import { readingOperations } from '@/features/readings';
 import { viewOperations } from '@/features/views';
+import { workspaceOperations } from '@/features/workspaces';
 import { openApiDocument } from '@/lib/openapi';
 import type { Operation } from '@/lib/operation';
 import { VERSION } from '@/lib/version';
 
 /** Every call of the API, in the order in which the document shows them. */
 const OPERATIONS = [
+  accountOperations,
+  workspaceOperations,
+  networkOperations,
+  importOperations,
+  memberOperations,
   groupingOperations,
   readingOperations,
-  memberOperations,
-  viewOperations,
   caseOperations,
+  viewOperations,
   jobOperations,
 ].flatMap((group) => Object.values(group)) as unknown as Operation[];
 

@@ -84,7 +84,8 @@ export function attributeCells(
       const helpfulness = special?.scores?.[snapshot] ?? level + SHARED * shared + noise + on('helpfulness');
       const rate = group.complaints * (1 + 0.25 * shared) * (0.45 + 0.35 * grumbles + 0.2 * skewed(fresh));
       const answer = group.belonging - group.belongingRise * back + 9 * shared + 5 * warmth + 3 * bell(fresh);
-      const posts = 0.1 + (scarce.has(i) ? 0.3 : 2.6) * (0.8 * talk + 0.2 * skewed(fresh));
+      const pace = scarce.has(i) ? 0.3 : special ? 1.2 : 2.6;
+      const posts = 0.1 + pace * (0.8 * talk + 0.2 * skewed(fresh));
       const months = (planted.months.get(i) ?? members[i]!.months) - monthsBetween(snapshot, LAST);
       const from = movedFrom.get(i);
       cells.set(i, {
@@ -93,7 +94,7 @@ export function attributeCells(
         belonging: surveyed.has(i) ? clamp(Math.round(answer), 0, 100).toFixed(0) : '',
         posts: posts.toFixed(1),
         months: months.toFixed(0),
-        circle: from === undefined ? circle : GROUPS[from]!.name,
+        circle: special ? (GROUPS[from ?? -1] ?? group).name : circle,
       });
     }
     return cells;

@@ -1,5 +1,5 @@
 import type { Random } from '../../../src/numerics/random';
-import { chance, pick, skewed } from './draws';
+import { between, chance, pick, skewed } from './draws';
 import { GROUPS, JOINS, LAST, LEAVES, NEW_ARRIVALS, NEWCOMERS, SEAM } from './plan';
 import { type Member, Ties, tieMaker } from './structure';
 
@@ -49,7 +49,10 @@ export function growMembers(random: Random, members: readonly Member[], ties: Ti
   return members.map((member, i) => {
     if (months[i]! < 0)
       months[i] =
-        15 + (member.group === NEW_ARRIVALS ? random.int(6) : Math.min(80, Math.floor(20 * skewed(random))));
+        15 +
+        (member.group === NEW_ARRIVALS
+          ? random.int(6)
+          : Math.floor(between(random, 0, 30) + 5 * skewed(random)));
     return { ...member, joined: firstSnapshot(months[i]!), left: STAYS, months: months[i]! };
   });
 }

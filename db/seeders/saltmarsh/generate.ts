@@ -38,7 +38,7 @@ export function generateSaltmarsh(seed = 1264): Saltmarsh {
   const now = members.length;
   addLeavers(random, members);
   const lived = [...growTies(random, members, ties), ...endedTies(random, members, ties)];
-  const rows = contactRows(random, lived);
+  const rows = contactRows(random, lived, (i) => members[i]!.role === 'branch');
   const handles = makeHandles(random, members.length, odd.handles);
   const cellsAt = attributeCells(seed + 1, members, odd);
   return {

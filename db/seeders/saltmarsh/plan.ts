@@ -37,10 +37,10 @@ const group = (
 ): GroupPlan => ({ name, size, branches, helpfulness, rise, complaints, belonging, belongingRise });
 
 export const GROUPS: readonly GroupPlan[] = [
-  group('Seed Library', 228, [6, 3], [3.95, 0.03], 1.3, [75, 0.2]),
-  group('North Plots', 201, [5, 4], [3.62, 0.01], 2.0, [69, 0]),
-  group('Bean Keepers', 174, [4], [4.1, 0.06], 1.5, [78, 0.5]),
-  group('Grafters', 156, [3], [3.74, 0.02], 1.9, [66, -0.2]),
+  group('Seed Library', 228, [5, 2], [3.95, 0.03], 1.3, [75, 0.2]),
+  group('North Plots', 201, [4], [3.62, 0.01], 2.0, [69, 0]),
+  group('Bean Keepers', 174, [3], [4.1, 0.06], 1.5, [78, 0.5]),
+  group('Grafters', 156, [], [3.74, 0.02], 1.9, [66, -0.2]),
   group('New Arrivals', 147, [6], [2.98, 0.01], 2.9, [49, -1.6]),
   group('Market Table', 130, [3], [3.68, 0.01], 2.3, [66, -0.1]),
   group('Tool Shed', 114, [2], [3.58, 0], 2.0, [71, 0.1]),

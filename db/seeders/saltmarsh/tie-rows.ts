@@ -24,12 +24,20 @@ const kindOf = (random: Random): string => {
   return draw < 0.6 ? 'reply' : draw < 0.87 ? 'trade' : 'endorse';
 };
 
-/** Rows of each tie: one, and sometimes another kind or the way back. */
-export function contactRows(random: Random, ties: readonly LivedTie[]): ContactRow[] {
+/**
+ * Rows of each tie: one, and sometimes another kind or the way back.
+ * @param close whether a member has few but close contacts, as those in thin branches have
+ */
+export function contactRows(
+  random: Random,
+  ties: readonly LivedTie[],
+  close: (member: number) => boolean,
+): ContactRow[] {
   const rows: ContactRow[] = [];
   for (const tie of ties) {
     const row = (source: number, target: number, kind: string): void => {
-      const contacts = Math.min(9, Math.floor(1 / Math.sqrt(1 - random.next())));
+      const usual = Math.min(9, Math.floor(1 / Math.sqrt(1 - random.next())));
+      const contacts = close(source) || close(target) ? 3 + random.int(2) : usual;
       const until = Math.min(LAST, tie.ended - 1);
       const active = chance(random, 0.8) ? until : tie.formed + random.int(until - tie.formed + 1);
       rows.push({ tie, source, target, kind, contacts, active, days: 1 + random.int(88) });

@@ -4,6 +4,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { describe, expect, test } from 'vitest';
 import { generateSaltmarsh, SALTMARSH_GROUPS, writeSaltmarshFiles } from '../../../db/seeders/saltmarsh';
+import { guessMemberColumns, guessTieColumns } from '@/features/imports/guess';
 import { membersIn, tiesIn } from './saltmarsh-files';
 
 const saltmarsh = generateSaltmarsh();
@@ -52,7 +53,18 @@ describe('sizes', () => {
 });
 
 describe('files', () => {
-  test('headers that a plain guess can match', () => {
+  test('the import guesses every column from its name', () => {
+    expect(guessTieColumns(ties.header)).toEqual({
+      source: 'source',
+      target: 'target',
+      weight: 'count',
+      kind: 'kind',
+      time: 'last_date',
+    });
+    expect(guessMemberColumns(members.header)).toMatchObject({ id: 'member', name: 'display_name' });
+  });
+
+  test('headers', () => {
     expect(ties.header).toEqual(['source', 'target', 'kind', 'count', 'last_date']);
     expect(members.header).toEqual([
       'member',

@@ -222,6 +222,7 @@ export async function makeWalkFixture(): Promise<WalkFixture> {
         expiresAt: new Date(Date.now() + 86_400_000),
       },
     });
+    await m.ApiToken.update({ revokedAt: null }, { where: { id: tokenId } });
     await m.Invitation.update({ revokedAt: null, acceptedAt: null }, { where: { id: invitation.id } });
   };
   await restore();

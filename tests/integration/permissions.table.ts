@@ -7,11 +7,13 @@ export interface WalkEndpoint {
   readonly needs: Action | null;
   /** Narrower than `needs`: the fixture's view belongs to the analyst, and what is theirs others may not change. */
   readonly only?: readonly Role[];
+  /** Roles that may do this to their own, and find nothing of theirs here: 404. */
+  readonly notTheirs?: readonly Role[];
   readonly query?: (fixture: WalkFixture) => Record<string, string>;
   readonly body?: (fixture: WalkFixture) => unknown;
 }
 
-const see = (needs: Action, query?: WalkEndpoint['query']): WalkEndpoint =>
+const see = (needs: Action | null, query?: WalkEndpoint['query']): WalkEndpoint =>
   query ? { needs, query } : { needs };
 const change = (needs: Action, body?: WalkEndpoint['body'], only?: readonly Role[]): WalkEndpoint => ({
   needs,
@@ -27,6 +29,42 @@ const REASON = 'Looked at recent posts and asked two raters.';
 
 /** Every other endpoint, with what it needs and a request that is well formed. */
 export const ENDPOINTS: Readonly<Record<string, WalkEndpoint>> = {
+  'GET /me': see(null),
+
+  'GET /workspaces/{workspace}': see('workspace.manage'),
+  'PATCH /workspaces/{workspace}': change('workspace.manage', () => ({ neighbourFloor: 5 })),
+  'GET /workspaces/{workspace}/people': see('workspace.manage'),
+  'PATCH /workspaces/{workspace}/people/{person}': change('workspace.manage', () => ({ role: 'viewer' })),
+  'DELETE /workspaces/{workspace}/people/{person}': change('workspace.manage'),
+  'GET /workspaces/{workspace}/invitations': see('workspace.manage'),
+  'POST /workspaces/{workspace}/invitations': change('workspace.manage', () => ({
+    email: 'new@test.example',
+    role: 'viewer',
+  })),
+  'DELETE /workspaces/{workspace}/invitations/{invitation}': change('workspace.manage'),
+  'GET /workspaces/{workspace}/tokens': see('explore.open'),
+  'POST /workspaces/{workspace}/tokens': change('explore.open', () => ({ name: 'Walked' })),
+  // The fixture's token is the admin's: others who may have tokens find none of their own by its id.
+  'DELETE /workspaces/{workspace}/tokens/{token}': {
+    ...change('explore.open'),
+    notTheirs: ['analyst', 'moderator'],
+  },
+  'GET /workspaces/{workspace}/audit': see('workspace.manage'),
+
+  'GET /workspaces/{workspace}/communities': see('brief.open'),
+  'POST /workspaces/{workspace}/communities': change('analysis.make', () => ({ name: 'Walked' })),
+  'GET /communities/{community}/imports': see('analysis.make'),
+  'POST /communities/{community}/imports': change('analysis.make'),
+  'GET /imports/{import}': see('analysis.make'),
+  'GET /imports/{import}/problems.csv': see('analysis.make'),
+  'POST /imports/{import}/accept': change('analysis.make'),
+  'POST /imports/{import}/discard': change('analysis.make'),
+  'GET /communities/{community}/snapshots': see('explore.open'),
+  'GET /snapshots/{snapshot}': see('explore.open'),
+  'GET /snapshots/{snapshot}/network': see('explore.open'),
+  'GET /snapshots/{snapshot}/spectrum': see('explore.open', () => ({ count: '2' })),
+  'GET /snapshots/{snapshot}/ties.csv': see('export.tables'),
+
   'GET /jobs/{job}': see('explore.open'),
   // Only the person who started a job and admins stop it; the fixture's was started by the moderator.
   'DELETE /jobs/{job}': change('explore.open', undefined, ['owner', 'admin', 'moderator']),

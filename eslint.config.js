@@ -24,6 +24,7 @@ export default tseslint.config(
       'no-console': 'error',
     },
   },
+  { files: ['src/env.d.ts'], rules: { '@typescript-eslint/triple-slash-reference': 'off' } },
   // The compiler knows the globals of TypeScript files better than a list could.
   { files: ['**/*.ts', '**/*.tsx', '**/*.astro'], rules: { 'no-undef': 'off' } },
   {
@@ -45,6 +46,7 @@ export default tseslint.config(
     languageOptions: {
       globals: {
         document: 'readonly',
+        Element: 'readonly',
         window: 'readonly',
         matchMedia: 'readonly',
         location: 'readonly',

@@ -75,7 +75,7 @@ async function stopLeftover(data) {
   const pid = Number(readFileSync(file, 'utf8').split('\n')[0]);
   if (!pid || !alive(pid)) return;
   // The number may belong to another program by now; only a postgres of this directory is ended.
-  let command = '';
+  let command;
   try {
     command = readFileSync(`/proc/${pid}/cmdline`, 'utf8');
   } catch {

@@ -8,7 +8,7 @@ export function holdDataDir(dataDir) {
   const file = join(dataDir, 'thrum.pid');
   if (existsSync(file)) {
     const pid = Number(readFileSync(file, 'utf8'));
-    let running = false;
+    let running;
     try {
       // The number may have been given to another program since; ours is a node that runs start.mjs.
       running = pid !== process.pid && readFileSync(`/proc/${pid}/cmdline`, 'utf8').includes('start.mjs');

@@ -24,8 +24,7 @@ export function binValues(
     count: 0,
   }));
   let missing = 0;
-  for (let i = 0; i < values.length; i++) {
-    const value = values[i] ?? Number.NaN;
+  for (const value of Array.from(values)) {
     if (!Number.isFinite(value)) {
       missing++;
       continue;

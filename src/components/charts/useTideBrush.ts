@@ -1,7 +1,11 @@
 import { useRef, type PointerEvent, type RefObject } from 'react';
 import { moveEdge, shiftRange, type EdgeRange } from './bins';
 
-type Drag = { kind: 'new' | 'move' | 'low' | 'high'; start: number; range: EdgeRange };
+interface Drag {
+  kind: 'new' | 'move' | 'low' | 'high';
+  start: number;
+  range: EdgeRange;
+}
 
 /**
  * Dragging on a strip of `bins` bins: across it makes a range, the range itself moves, a handle moves one end.

@@ -70,8 +70,11 @@ export async function inspectText(open: () => Promise<Readable>, file: string): 
         isUtf8 = false;
       }
     }
-    for (let i = 0; i < chunk.length; i++)
-      if (chunk[i] === 0) (length + i) % 2 === 0 ? zerosEven++ : zerosOdd++;
+    for (let i = 0; i < chunk.length; i++) {
+      if (chunk[i] !== 0) continue;
+      if ((length + i) % 2 === 0) zerosEven++;
+      else zerosOdd++;
+    }
     length += chunk.length;
   }
   if (length === 0) throw importErrors.empty(file);

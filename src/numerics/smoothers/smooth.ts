@@ -177,7 +177,10 @@ function smoothLarge(
   return { ...fit, ...standardise(problem, fit, zeroed), zeroed, notes };
 }
 
-type Found = { alpha: number; end: 'low' | 'high' | null };
+interface Found {
+  alpha: number;
+  end: 'low' | 'high' | null;
+}
 
 /**
  * Minimum of a criterion of which only the derivative by log α is known, with some noise: the derivative is summed

@@ -101,7 +101,7 @@ export function FilterChips({ props, control }: { props: ExploreProps; control: 
           {filterWords(props, filter)}
         </Chip>
       ))}
-      <Menu trigger="Add filter" look="chip" icon="plus" bare entries={entries} label="Add filter" />
+      <Menu trigger="Add filter" look="chip" icon="plus" entries={entries} label="Add filter" />
       {props.abilities.includes('explore.open') && (
         <form
           role="search"

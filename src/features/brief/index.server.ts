@@ -1,0 +1,1 @@
+export { briefOf, type BriefData } from './brief.server';

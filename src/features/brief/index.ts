@@ -1,0 +1,1 @@
+export { headline, lead, type BriefFacts } from './sentences';

@@ -2,6 +2,8 @@ import { UndirectedGraph } from 'graphology';
 import forceAtlas2 from 'graphology-layout-forceatlas2';
 import {
   buildNetwork,
+  CancelledError,
+  componentMembers,
   components,
   spectralLayout,
   spectrum,
@@ -9,6 +11,7 @@ import {
   type Network,
   type Watch,
 } from '@/numerics';
+import { spreadApart } from './spread';
 
 export interface ShapeInput {
   readonly n: number;
@@ -34,34 +37,71 @@ function iterationsFor(n: number, ties: number): number {
   return n > 2_000 ? 60 : 240;
 }
 
-/** Unfolds the spectral start by forces: members of one group part, groups stay where they are. */
-function settle(network: Network, x: Float64Array, y: Float64Array, watch: Watch): void {
+const SPREAD_UP_TO = 20_000;
+const FORCES = {
+  barnesHutOptimize: true,
+  gravity: 1,
+  scalingRatio: 40,
+  edgeWeightInfluence: 0,
+  outboundAttractionDistribution: true,
+  slowDown: 2,
+};
+
+/**
+ * Unfolds the spectral start of the largest component by forces, then fits it back into the disc that it had:
+ * the other components stand around that disc and would only be blown away.
+ */
+function settle(network: Network, main: Int32Array, x: Float64Array, y: Float64Array, watch: Watch): void {
   const iterations = iterationsFor(network.n, network.targets.length / 2);
-  if (iterations === 0) return;
+  if (iterations === 0 || main.length < 5) return;
+  const radius = discOf(main, x, y, 1).radius;
   const graph = new UndirectedGraph();
-  for (let i = 0; i < network.n; i++) graph.addNode(i, { x: x[i]!, y: y[i]! });
-  for (let i = 0; i < network.n; i++)
+  for (const i of main) graph.addNode(i, { x: x[i]!, y: y[i]! });
+  for (const i of main)
     for (let k = network.offsets[i]!; k < network.offsets[i + 1]!; k++)
-      if (network.targets[k]! > i) graph.addEdge(i, network.targets[k]!, { weight: network.weights[k]! });
-  const settings = {
-    barnesHutOptimize: network.n > 500,
-    gravity: 0.6,
-    scalingRatio: 24,
-    strongGravityMode: false,
-    slowDown: 3,
-    edgeWeightInfluence: 0.5,
-    linLogMode: false,
-  };
+      if (network.targets[k]! > i) graph.addEdge(i, network.targets[k]!);
   const ROUND = 8;
   for (let done = 0; done < iterations; done += ROUND) {
-    if (watch.cancelled?.()) break;
+    if (watch.cancelled?.()) throw new CancelledError();
     watch.progress?.(0.4 + (0.6 * done) / iterations, 'Placing members');
-    forceAtlas2.assign(graph, { iterations: Math.min(ROUND, iterations - done), settings });
+    forceAtlas2.assign(graph, { iterations: Math.min(ROUND, iterations - done), settings: FORCES });
   }
   graph.forEachNode((key, place) => {
     x[Number(key)] = place.x as number;
     y[Number(key)] = place.y as number;
   });
+  fitDisc(main, x, y, radius);
+  if (main.length <= SPREAD_UP_TO) spreadApart(main, x, y, radius * 0.85);
+}
+
+/** Centre of some members, and the radius within which a share of them lies. */
+function discOf(
+  members: Int32Array,
+  x: Float64Array,
+  y: Float64Array,
+  share: number,
+): { cx: number; cy: number; radius: number } {
+  let cx = 0;
+  let cy = 0;
+  for (const i of members) {
+    cx += x[i]! / members.length;
+    cy += y[i]! / members.length;
+  }
+  const far = Float64Array.from(members, (i) => Math.hypot(x[i]! - cx, y[i]! - cy)).sort();
+  return { cx, cy, radius: far[Math.round(share * (far.length - 1))]! || 1 };
+}
+
+/** Scales members into a disc; the thin branches that reach far out are drawn in, so that they do not set the scale. */
+function fitDisc(members: Int32Array, x: Float64Array, y: Float64Array, radius: number): void {
+  const { cx, cy, radius: most } = discOf(members, x, y, 0.96);
+  for (const i of members) {
+    const dx = (x[i]! - cx) / most;
+    const dy = (y[i]! - cy) / most;
+    const far = Math.hypot(dx, dy);
+    const drawn = far > 1 ? (1 + 0.25 * Math.log(far)) / far : 1;
+    x[i] = dx * drawn * radius * 0.85;
+    y[i] = dy * drawn * radius * 0.85;
+  }
 }
 
 /** Scales places to about ±1000 and to 32 bits; something not finite becomes the middle. */
@@ -82,7 +122,7 @@ export function computeShape(input: ShapeInput, watch: Watch): Shape {
   const layout = spectralLayout(network, { seed: 1 }, watch);
   const x = Float64Array.from(layout.x);
   const y = Float64Array.from(layout.y);
-  settle(network, x, y, watch);
+  if (parts.largest >= 0) settle(network, componentMembers(parts)[parts.largest]!, x, y, watch);
   return {
     network,
     component: parts.labels,

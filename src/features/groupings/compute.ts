@@ -206,7 +206,14 @@ export function computeSmootherGroups(
 ): Int32Array {
   if (k === 1) return new Int32Array(net.n);
   try {
-    return spectralGrouping(net, { k: k ?? 'auto', laplacian: 'regularised', seed }, watch).labels;
+    const { labels, islets } = spectralGrouping(
+      net,
+      { k: k ?? 'auto', laplacian: 'regularised', seed },
+      watch,
+    );
+    // A small component has its own constant already; a level beside it would say the same twice.
+    const alone = new Set(islets);
+    return labels.map((label) => (alone.has(label) ? -1 : label));
   } catch (error) {
     if (k === null && error instanceof UnanswerableError) return new Int32Array(net.n);
     throw error;

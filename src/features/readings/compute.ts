@@ -52,7 +52,8 @@ export function computeReading({ net, filter, ...input }: ReadingInput, watch?: 
   watch?.progress?.(0.94, 'Drawing the warp');
   const filled = columns.value.map((value, i) => (Number.isNaN(value) ? columns.smoothed[i]! : value));
   const laplacian = filter.kind === 'two-level' ? 'combinatorial' : input.laplacian;
-  const levels = filter.kind === 'two-level' ? new Set(input.groups).size : null;
+  const levels =
+    filter.kind === 'two-level' ? new Set(input.groups?.filter((group) => group >= 0)).size : null;
   return {
     columns,
     result: {

@@ -5,7 +5,7 @@ import type { Watch } from '../types';
 import { groupColumns, type Fit, type Problem } from './model';
 import { pseudoInverse, quadraticForm, times, type PseudoInverse } from './small-matrix';
 
-const PROBES = 12;
+const PROBES = 8;
 const DIAGONAL_PROBES = 48;
 /** Streams of their own: probes must not repeat draws that made the data, as a demo with the same seed would. */
 const PROBE_STREAM = 0x5bd1e995;
@@ -168,13 +168,13 @@ export class LargeSystem {
 
   /** Derivative of −2 log restricted likelihood by log α; its root is the estimate. */
   score(alpha: number): number {
-    const { f, fx, c, quadratic, degrees } = this.solved(alpha, 1e-6);
+    const { f, fx, c, quadratic, degrees } = this.solved(alpha, 1e-4);
     const g = fx.length;
     let levels = 0;
     for (let i = 0; i < g; i++)
       for (let j = 0; j < g; j++) levels += c.matrix[i * g + j]! * this.energy(fx[i]!, fx[j]!);
     const fit = (degrees * alpha * this.energy(f, f)) / quadratic;
-    return fit + this.problem.nullity - this.trace(alpha, fx, 1e-5) + alpha * levels;
+    return fit + this.problem.nullity - this.trace(alpha, fx, 1e-4) + alpha * levels;
   }
 
   /** Generalised cross-validation for a smoother without levels. */
@@ -193,7 +193,7 @@ export class LargeSystem {
   }
 
   /** Diagonal of A⁻¹: N, N² in closed form, the rest of the Neumann series by probes (a control variate). */
-  private inverseDiagonal(alpha: number): Float64Array {
+  private inverseDiagonal(alpha: number, probes: number): Float64Array {
     const { l } = this.problem;
     const n = l.n;
     const scale = this.diagonal.map((d, i) => 1 / Math.sqrt(this.weights[i]! + alpha * d));
@@ -207,8 +207,8 @@ export class LargeSystem {
       l.multiply(inside, out);
       return v.map((one, i) => one - scale[i]! * (this.weights[i]! * inside[i]! + alpha * out[i]!));
     };
-    for (let k = 0; k < DIAGONAL_PROBES; k++) {
-      this.watch?.progress?.(0.7 + (0.2 * k) / DIAGONAL_PROBES, 'Weighing each member’s own score');
+    for (let k = 0; k < probes; k++) {
+      this.watch?.progress?.(0.7 + (0.2 * k) / probes, 'Weighing each member’s own score');
       const z = Float64Array.from({ length: n }, () => (random.next() < 0.5 ? -1 : 1));
       const { x } = solveShifted(
         l,
@@ -222,7 +222,7 @@ export class LargeSystem {
       const n1 = times1(z);
       const n2 = times1(n1);
       for (let i = 0; i < n; i++)
-        estimate[i]! += (z[i]! * (x[i]! / scale[i]! - z[i]! - n1[i]! - n2[i]!)) / DIAGONAL_PROBES;
+        estimate[i]! += (z[i]! * (x[i]! / scale[i]! - z[i]! - n1[i]! - n2[i]!)) / probes;
     }
     // All terms of the series have a non-negative diagonal, so the closed part is a lower bound.
     return estimate.map((rest, i) => scale[i]! ** 2 * (1 + squares[i]! + Math.max(0, rest)));
@@ -261,10 +261,11 @@ export class LargeSystem {
     });
   }
 
-  fit(alpha: number): Fit & { readonly refine: (members: readonly number[]) => void } {
-    const solved = this.solved(alpha, 1e-10);
+  /** @param rough fewer probes and a looser solve, for the rounds that only look for wild scores */
+  fit(alpha: number, rough = false): Fit & { readonly refine: (members: readonly number[]) => void } {
+    const solved = this.solved(alpha, rough ? 1e-6 : 1e-10);
     const { fx, c, quadratic, degrees, smoothed, residual } = solved;
-    const inverse = this.inverseDiagonal(alpha);
+    const inverse = this.inverseDiagonal(alpha, rough ? 12 : DIAGONAL_PROBES);
     const n = smoothed.length;
     const variance = new Float64Array(n);
     const leverage = new Float64Array(n);

@@ -13,7 +13,7 @@ export const EXACT_UP_TO = 2_000;
 const WILD = 2.5;
 const ROUNDS = 3;
 /** Members whose leverage is made exact on the large path, at most. */
-const REFINED = 400;
+const REFINED = 120;
 
 export type Strength =
   | { readonly kind: 'given'; readonly alpha: number }
@@ -143,24 +143,29 @@ function smoothLarge(
     strength.kind === 'restricted-likelihood' ? [-1.5, 4] : rangeFor(problem.l.kind, strength.kind);
   let zeroed: Uint8Array = new Uint8Array(problem.l.n);
   let end: 'low' | 'high' | null = null;
-  const choose = (system: LargeSystem): number => {
+  const choose = (system: LargeSystem, near?: number): number => {
     if (strength.kind === 'given') return strength.alpha;
     const found =
       strength.kind === 'gcv'
         ? coarseMinimum((alpha) => system.crossValidation(alpha), low, high, watch)
-        : rootOf((alpha) => system.score(alpha), low, high, watch);
+        : rootOf(
+            (alpha) => system.score(alpha),
+            near === undefined ? low : Math.max(low, near - 1),
+            near === undefined ? high : Math.min(high, near + 1),
+            watch,
+          );
     end = found.end;
     return found.alpha;
   };
   let alpha = choose(new LargeSystem(problem, zeroed, seed, watch));
   for (let round = 0; robust && round < ROUNDS; round++) {
     watch?.progress?.(0.5 + 0.05 * round, 'Setting wild scores aside');
-    const fit = new LargeSystem(problem, zeroed, seed, watch).fit(alpha);
+    const fit = new LargeSystem(problem, zeroed, seed, watch).fit(alpha, true);
     const next = wild(standardise(problem, fit, zeroed).z, problem.observed);
     const same = next.every((one, i) => one === zeroed[i]);
     zeroed = next;
     // The strength moves most when the wild scores first go.
-    if (round === 0) alpha = choose(new LargeSystem(problem, zeroed, seed, watch));
+    if (round === 0) alpha = choose(new LargeSystem(problem, zeroed, seed, watch), Math.log10(alpha));
     if (same) break;
   }
   const fit = new LargeSystem(problem, zeroed, seed, watch).fit(alpha);
@@ -184,12 +189,13 @@ interface Found {
 
 /**
  * Minimum of a criterion of which only the derivative by log α is known, with some noise: the derivative is summed
- * up over half decades, and the lowest point is refined by bisection to 2 %.
+ * up over about decades, and the lowest point is refined by bisection to 7 %.
  */
 function rootOf(score: (alpha: number) => number, low: number, high: number, watch?: Watch): Found {
   const places: number[] = [];
   const slopes: number[] = [];
-  for (let place = low; place <= high + 1e-9; place += 0.5) {
+  const step = high - low > 2.5 ? (high - low) / 6 : (high - low) / 2;
+  for (let place = low; place <= high + 1e-9; place += step) {
     watch?.progress?.(
       (0.4 * (place - low)) / (high - low),
       'Estimating how far neighbours resemble each other',
@@ -201,7 +207,7 @@ function rootOf(score: (alpha: number) => number, low: number, high: number, wat
   let best = 0;
   let lowest = 0;
   for (let k = 1; k < places.length; k++) {
-    criterion += (slopes[k - 1]! + slopes[k]!) / 2;
+    criterion += (step * (slopes[k - 1]! + slopes[k]!)) / 2;
     if (criterion < lowest) {
       lowest = criterion;
       best = k;
@@ -210,7 +216,7 @@ function rootOf(score: (alpha: number) => number, low: number, high: number, wat
   if (best === 0) return { alpha: 10 ** low, end: 'low' };
   if (best === places.length - 1) return { alpha: 10 ** high, end: 'high' };
   let [a, b] = slopes[best]! > 0 ? [places[best - 1]!, places[best]!] : [places[best]!, places[best + 1]!];
-  while (b - a > 0.01) {
+  while (b - a > 0.03) {
     const middle = (a + b) / 2;
     if (score(10 ** middle) > 0) b = middle;
     else a = middle;

@@ -194,3 +194,36 @@ for (const path of ['/sign-in', '/sign-up', '/forgot'])
     await expectAccessible(page);
     expect(errors).toEqual([]);
   });
+
+test('pages of a workspace are closed to strangers, to other workspaces and to roles that may not open them', async ({
+  page,
+  browser,
+  baseURL,
+}) => {
+  const base = await signIn(page, 'analyst');
+  const settings = `${base.split('/c/')[0]}/settings/people`;
+  const open = async (
+    role: string | null,
+    path: string,
+  ): Promise<{ status: number; url: string; text: string }> => {
+    const context = await browser.newContext({ baseURL: baseURL! });
+    const other = await context.newPage();
+    if (role)
+      await other.request.post('/api/auth/sign-in/email', {
+        data: { email: `${role}@saltmarsh.example`, password: PASSWORD },
+      });
+    const response = await other.goto(path);
+    const answer = { status: response!.status(), url: other.url(), text: await response!.text() };
+    await context.close();
+    return answer;
+  };
+  for (const place of ['map', 'members', 'groups', 'readings', 'cases', 'imports', 'imports/new']) {
+    const viewer = await open('viewer', `${base}/${place}`);
+    expect([place, viewer.status]).toEqual([place, 403]);
+    expect(viewer.text).not.toContain('Saltmarsh Growers');
+    expect((await open(null, `${base}/${place}`)).url).toContain('/sign-in?next=');
+  }
+  expect((await open('analyst', settings)).status).toBe(403);
+  const nowhere = base.replace(/[0-9a-f]{12}/, '000000000000');
+  expect((await open('owner', `${nowhere}/map`)).status).toBe(404);
+});

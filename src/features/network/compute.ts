@@ -38,6 +38,8 @@ function iterationsFor(n: number, ties: number): number {
 }
 
 const SPREAD_UP_TO = 20_000;
+/** Share of its disc that the largest component is fitted into, so that it stays clear of the small ones around. */
+const FITTED = 0.7;
 const FORCES = {
   barnesHutOptimize: true,
   gravity: 1,
@@ -71,7 +73,7 @@ function settle(network: Network, main: Int32Array, x: Float64Array, y: Float64A
     y[Number(key)] = place.y as number;
   });
   fitDisc(main, x, y, radius);
-  if (main.length <= SPREAD_UP_TO) spreadApart(main, x, y, radius * 0.85);
+  if (main.length <= SPREAD_UP_TO) spreadApart(main, x, y, radius * FITTED);
 }
 
 /** Centre of some members, and the radius within which a share of them lies. */
@@ -99,8 +101,8 @@ function fitDisc(members: Int32Array, x: Float64Array, y: Float64Array, radius: 
     const dy = (y[i]! - cy) / most;
     const far = Math.hypot(dx, dy);
     const drawn = far > 1 ? (1 + 0.25 * Math.log(far)) / far : 1;
-    x[i] = dx * drawn * radius * 0.85;
-    y[i] = dy * drawn * radius * 0.85;
+    x[i] = dx * drawn * radius * FITTED;
+    y[i] = dy * drawn * radius * FITTED;
   }
 }
 

@@ -1,4 +1,5 @@
 import type { Actor } from '@/lib/actor';
+import { formatNumber } from '@/lib/format';
 import { notFound } from '@/lib/problem';
 import { Case, Community, Grouping, Reading, Snapshot } from '@/server/models';
 import { abilities, type Action } from '@/features/workspaces';
@@ -150,7 +151,7 @@ async function navigation(
         label: LABELS[place],
         href: placeHref(access.workspace.id, community.id, place, snapshot?.id),
         icon: place === 'views' ? 'bookmark' : place,
-        ...(count === undefined ? {} : { count }),
+        ...(count === undefined ? {} : { count: formatNumber(count) }),
         ...(place === 'cases' && open > 0 ? { badge: open } : {}),
         current: place === current,
       };

@@ -19,7 +19,7 @@ export interface NavItem {
   readonly label: string;
   readonly href: string;
   readonly icon: IconName;
-  readonly count?: number;
+  readonly count?: string;
   /** A count that waits for this person. */
   readonly badge?: number;
   readonly current: boolean;

@@ -22,7 +22,10 @@ export interface MailFake {
   stop(): Promise<void>;
 }
 
-/** An SMTP server that delivers nothing: mails are kept as files and listed, newest first, at `GET /mails`. */
+/**
+ * An SMTP server that delivers nothing: mails are kept as files and listed, newest first, at `GET /mails`, one at
+ * `GET /mails/:id`; `GET /wait?to=…&ms=…` answers with the newest mail to that address as soon as there is one.
+ */
 export async function startMailFake(folder: string): Promise<MailFake> {
   mkdirSync(folder, { recursive: true });
   const smtp = new SMTPServer({
@@ -55,12 +58,29 @@ export async function startMailFake(folder: string): Promise<MailFake> {
       .reverse()
       .slice(0, 200)
       .map((name) => JSON.parse(readFileSync(join(folder, name), 'utf8')) as CaughtMail);
+  const waitFor = async (to: string, until: number): Promise<CaughtMail | undefined> => {
+    for (;;) {
+      const found = list().find((mail) => mail.to.includes(to));
+      if (found || Date.now() >= until) return found;
+      await new Promise((resolve) => setTimeout(resolve, 50));
+    }
+  };
+  const answerTo = async (url: URL): Promise<CaughtMail | CaughtMail[] | undefined> => {
+    const id = /^\/mails\/([\w-]+)$/.exec(url.pathname)?.[1];
+    if (id) return list().find((mail) => mail.id === id);
+    if (url.pathname === '/mails') return list();
+    if (url.pathname !== '/wait') return undefined;
+    const ms = Math.min(Number(url.searchParams.get('ms') ?? 5000), 60_000);
+    return waitFor(url.searchParams.get('to') ?? '', Date.now() + ms);
+  };
   const http = createServer((request, response) => {
-    const id = /^\/mails\/([\w-]+)$/.exec(request.url ?? '')?.[1];
-    const mails = list();
-    const answer = id ? mails.find((mail) => mail.id === id) : request.url === '/mails' ? mails : undefined;
-    response.writeHead(answer ? 200 : 404, { 'content-type': 'application/json' });
-    response.end(JSON.stringify(answer ?? null));
+    answerTo(new URL(request.url ?? '/', 'http://mail.local')).then(
+      (answer) => {
+        response.writeHead(answer ? 200 : 404, { 'content-type': 'application/json' });
+        response.end(JSON.stringify(answer ?? null));
+      },
+      () => response.writeHead(500).end(),
+    );
   });
   await new Promise<void>((resolve) => http.listen(0, '127.0.0.1', () => resolve()));
   return {

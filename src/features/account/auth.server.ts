@@ -20,7 +20,7 @@ export function trustedOrigins(request?: Request): string[] {
 }
 
 const make = () => {
-  const { AUTH_SECRET, PUBLIC_URL } = config();
+  const { AUTH_SECRET, PUBLIC_URL, LOG_LEVEL } = config();
   return betterAuth({
     appName: 'Thrum',
     baseURL: PUBLIC_URL,
@@ -85,6 +85,7 @@ const make = () => {
         '/request-password-reset': { window: 60, max: 10 },
       },
     },
+    logger: { disabled: LOG_LEVEL === 'silent' },
     telemetry: { enabled: false },
   });
 };

@@ -1,4 +1,5 @@
 export { abilities, ACTIONS, can, mayGrant, seesNames, type Action } from './policy';
+export { ROLE_NAMES } from './roles';
 export {
   workspaceOperations,
   type AuditView,

@@ -1,7 +1,7 @@
 import { createHash, randomBytes } from 'node:crypto';
 import { Op } from 'sequelize';
 import type { Actor } from '@/lib/actor';
-import { notFound } from '@/lib/problem';
+import { forbidden, notFound } from '@/lib/problem';
 import { ApiToken, sequelize, User } from '@/server/models';
 import { audit } from './audit.server';
 import { authorise } from './access.server';
@@ -41,6 +41,8 @@ export async function createToken(
   input: { name: string; readOnly: boolean; days: number },
 ): Promise<TokenView & { token: string }> {
   await authorise(actor, workspaceId, 'explore.open');
+  // Else a token could outlive its own expiry.
+  if (actor.via === 'token') throw forbidden('A token cannot make tokens. Sign in for that.');
   const token = `thrum_${randomBytes(30).toString('base64url')}`;
   const row = await sequelize.transaction(async (transaction) => {
     const made = await ApiToken.create(

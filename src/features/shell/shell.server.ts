@@ -111,6 +111,9 @@ export async function openPlace(actor: Actor, request: PlaceRequest): Promise<Op
           }))
         : [],
       nav,
+      ...(access.can('explore.open') && !access.can(NEEDS.settings)
+        ? { settingsHref: `/w/${workspaceId}/settings/tokens` }
+        : {}),
     },
   };
 }

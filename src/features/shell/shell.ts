@@ -34,6 +34,8 @@ export interface ShellData {
   readonly snapshot?: { id: string; label: string; takenOn: string; members: number; ties: number };
   readonly snapshots: { id: string; label: string; takenOn: string; href: string }[];
   readonly nav: NavItem[];
+  /** Settings that are this person's to open: the workspace's, or only their own API tokens. */
+  readonly settingsHref?: string;
 }
 
 /** Address of a place of a community. */

@@ -49,12 +49,13 @@ export function PersonRow({ person, grantable, viewersSeeNames, onRole, onRemove
           </span>
         </span>
       </td>
-      <td>
+      <td style={{ minWidth: 142 }}>
         {changeable ? (
           <Select
             label={`Role of ${person.name}`}
             labelPlace="hidden"
             size="small"
+            full
             options={grantable.map((one) => ({ id: one, label: ROLE_NAMES[one] }))}
             value={person.role}
             onChange={(role) => role !== person.role && onRole(role)}

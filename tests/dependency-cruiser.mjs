@@ -74,7 +74,7 @@ export default {
     doNotFollow: { path: 'node_modules' },
     tsConfig: { fileName: 'tsconfig.json' },
     tsPreCompilationDeps: true,
-    exclude: { path: '^(dist|\\.astro|node_modules/(?!astro|sequelize|ml-matrix))' },
+    exclude: { path: '^(dist|\\.astro)' },
     enhancedResolveOptions: { extensions: ['.ts', '.tsx', '.mjs', '.js', '.astro', '.json'] },
   },
 };

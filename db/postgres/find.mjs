@@ -1,14 +1,16 @@
 import { spawnSync } from 'node:child_process';
 import { existsSync, mkdirSync, readdirSync, writeFileSync } from 'node:fs';
-import { join } from 'node:path';
+import { dirname, join } from 'node:path';
 
 const ROOT = '/usr/lib/postgresql';
+const CLUSTER_CONF = '/etc/postgresql-common/createcluster.conf';
 
-/** Folder of PostgreSQL's programs, newest version first, or null. */
-export function findBinaries() {
+/** Folder of PostgreSQL's programs of `version`, or of the newest there is, or null. */
+export function findBinaries(version = null) {
   if (!existsSync(ROOT)) return null;
   const versions = readdirSync(ROOT)
     .filter((name) => /^\d+$/.test(name) && existsSync(join(ROOT, name, 'bin', 'initdb')))
+    .filter((name) => version === null || name === version)
     .sort((a, b) => Number(b) - Number(a));
   return versions.length > 0 ? join(ROOT, versions[0], 'bin') : null;
 }
@@ -49,15 +51,29 @@ export function installPackages(packages, log) {
     );
 }
 
-/** Folder of PostgreSQL's programs, installing them if missing. */
-export function ensureBinaries(log) {
-  const found = findBinaries();
+/**
+ * Folder of PostgreSQL's programs, installing them if missing.
+ * @param {string | null} version major version that an existing cluster was made with, since no other can open it
+ */
+export function ensureBinaries(version, log) {
+  const found = findBinaries(version);
   if (found) return found;
+  if (version !== null && findBinaries())
+    throw new Error(
+      `The cluster in DATA_DIR was made by PostgreSQL ${version}, which is not installed any more. ` +
+        `Install postgresql-${version}, or set another DATA_DIR.`,
+    );
   // Debian would start a cluster of its own on the usual port; ours lives in DATA_DIR.
-  if (process.getuid() === 0) {
-    mkdirSync('/etc/postgresql-common', { recursive: true });
-    if (!existsSync('/etc/postgresql-common/createcluster.conf'))
-      writeFileSync('/etc/postgresql-common/createcluster.conf', 'create_main_cluster = false\n');
+  if (!existsSync(CLUSTER_CONF)) {
+    const line = 'create_main_cluster = false\n';
+    if (process.getuid() === 0) {
+      mkdirSync(dirname(CLUSTER_CONF), { recursive: true });
+      writeFileSync(CLUSTER_CONF, line);
+    } else {
+      // Where sudo needs a password this does nothing, and the next step says so.
+      spawnSync('sudo', ['-n', 'mkdir', '-p', dirname(CLUSTER_CONF)], { stdio: 'ignore' });
+      spawnSync('sudo', ['-n', 'tee', CLUSTER_CONF], { input: line, stdio: ['pipe', 'ignore', 'ignore'] });
+    }
   }
   installPackages(['postgresql'], log);
   const installed = findBinaries();

@@ -1,8 +1,8 @@
-import { spawnSync } from 'node:child_process';
 import { createHash } from 'node:crypto';
-import { existsSync, mkdirSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { existsSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { pathToFileURL } from 'node:url';
+import { runOnce } from './children.mjs';
 import { checkNode, fail, say } from './console.mjs';
 import { ensurePackages } from './packages.mjs';
 
@@ -63,13 +63,13 @@ export async function ensureBuild() {
   const hash = sourcesHash();
   if (existsSync(MARK) && readFileSync(MARK, 'utf8') === hash) return;
   say('Building the pages and the job process');
-  const result = spawnSync(process.execPath, ['node_modules/astro/astro.js', 'build'], {
-    stdio: ['ignore', 'pipe', 'pipe'],
-    encoding: 'utf8',
-    env: { ...process.env, NODE_ENV: 'production', ASTRO_TELEMETRY_DISABLED: '1' },
+  // A build that breaks off must not be taken for the one before it.
+  rmSync(MARK, { force: true });
+  await runOnce('The build', ['node_modules/astro/astro.js', 'build'], {
+    ...process.env,
+    NODE_ENV: 'production',
+    ASTRO_TELEMETRY_DISABLED: '1',
   });
-  if (result.status !== 0)
-    fail(`The build failed.\n${(result.stdout + result.stderr).trim().split('\n').slice(-25).join('\n')}`);
   // `astro build` empties dist, so the programs come after it.
   await bundle();
   mkdirSync('dist', { recursive: true });
@@ -79,6 +79,6 @@ export async function ensureBuild() {
 if (import.meta.url === pathToFileURL(process.argv[1] ?? '').href) {
   checkNode();
   ensurePackages();
-  await ensureBuild();
+  await ensureBuild().catch((error) => fail(error.message));
   say('Built.');
 }

@@ -4,22 +4,34 @@ import { existsSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 const children = [];
 let ending = false;
 
+const hasEnded = (child) => child.exitCode !== null || child.signalCode !== null;
+
 let pidFile = '';
 const notePids = () => {
-  const pids = children.map(({ child }) => child?.pid).filter(Boolean);
+  const pids = children.filter(({ child }) => child && !hasEnded(child)).map(({ child }) => child.pid);
   if (pidFile) writeFileSync(pidFile, JSON.stringify(pids));
 };
+
+/** The noted numbers; none where the machine went down while they were written. */
+function notedPids(file) {
+  try {
+    return JSON.parse(readFileSync(file, 'utf8'));
+  } catch {
+    return [];
+  }
+}
 
 /** Keeps the children's process numbers in `file`, after ending those that a crashed run left there. */
 export async function endLeftovers(file) {
   pidFile = file;
   if (!existsSync(file)) return;
-  for (const pid of JSON.parse(readFileSync(file, 'utf8'))) {
+  // The number may have been given to another program since; one that ended and waits to be collected has no command.
+  const ours = (pid) => /dist\/(worker|server|fakes)\//.test(readFileSync(`/proc/${pid}/cmdline`, 'utf8'));
+  for (const pid of notedPids(file)) {
     try {
-      // The number may have been given to another program since.
-      if (!/dist\/(worker|server|fakes)\//.test(readFileSync(`/proc/${pid}/cmdline`, 'utf8'))) continue;
+      if (!ours(pid)) continue;
       process.kill(pid, 'SIGKILL');
-      while (existsSync(`/proc/${pid}`)) await new Promise((resolve) => setTimeout(resolve, 50));
+      for (let i = 0; i < 100 && ours(pid); i++) await new Promise((resolve) => setTimeout(resolve, 50));
     } catch {
       // Gone already.
     }
@@ -49,6 +61,7 @@ const worthShowing = (line) => {
 
 /** Starts a program that is started again, a little later each time, when it dies. */
 export function keepRunning(name, args, env) {
+  if (ending) return;
   const entry = { name, child: null };
   children.push(entry);
   let failures = 0;
@@ -72,8 +85,11 @@ export function keepRunning(name, args, env) {
 
 /** Runs a program to its end and answers with its last lines when it fails. */
 export function runOnce(name, args, env) {
+  if (ending) return Promise.reject(new Error('Thrum is ending.'));
   return new Promise((resolve, reject) => {
     const child = spawn(process.execPath, args, { env, stdio: ['ignore', 'pipe', 'pipe'] });
+    children.push({ name, child });
+    notePids();
     let tail = '';
     const keep = (chunk) => (tail = (tail + chunk).slice(-4000));
     child.stdout.on('data', keep);
@@ -86,6 +102,7 @@ export function runOnce(name, args, env) {
 
 /** Starts a program that prints one line of JSON when it is ready, and answers with it. */
 export function startAndRead(name, args, env) {
+  if (ending) return Promise.reject(new Error('Thrum is ending.'));
   const child = spawn(process.execPath, args, { env, stdio: ['ignore', 'pipe', 'pipe'], detached: true });
   children.push({ name, child });
   notePids();
@@ -104,7 +121,7 @@ export function startAndRead(name, args, env) {
 export async function endAll() {
   ending = true;
   for (const { child } of children.reverse()) {
-    if (!child || child.exitCode !== null || child.signalCode !== null) continue;
+    if (!child || hasEnded(child)) continue;
     const gone = new Promise((resolve) => child.once('exit', resolve));
     child.kill('SIGTERM');
     const late = setTimeout(() => child.kill('SIGKILL'), 5000);

@@ -10,7 +10,7 @@ export function ensurePackages() {
   const lock = createHash('sha256').update(readFileSync('package-lock.json')).digest('hex');
   if (existsSync(MARK) && readFileSync(MARK, 'utf8') === lock) return;
   say('Installing packages (once; a few minutes)');
-  const result = spawnSync('npm', ['ci', '--no-audit', '--no-fund', '--loglevel=error'], {
+  const result = spawnSync('npm', ['ci', '--include=dev', '--no-audit', '--no-fund', '--loglevel=error'], {
     stdio: ['ignore', 'ignore', 'inherit'],
   });
   if (result.status !== 0)

@@ -44,18 +44,19 @@ async function untilReady(url) {
 
 checkNode();
 process.chdir(resolve(import.meta.dirname, '../..'));
-const host = process.env.HOST ?? '127.0.0.1';
-const port = Number(process.env.PORT ?? 4321);
-const dataDir = resolve(process.env.DATA_DIR ?? '.data');
+const host = process.env.HOST || '127.0.0.1';
+const port = Number(process.env.PORT || 4321);
+const dataDir = resolve(process.env.DATA_DIR || '.data');
 if (!Number.isInteger(port) || port < 1 || port > 65535) fail('PORT must be a number from 1 to 65535.');
 const letGo = holdDataDir(dataDir);
-let postgres = null;
+let starting = null;
 let ending = null;
 
 function end(code) {
   ending ??= (async () => {
     await endAll();
-    await postgres?.stop();
+    // A signal may come while the database is still coming up.
+    await (await starting?.catch(() => null))?.stop();
     letGo();
     process.exit(code);
   })();
@@ -68,21 +69,23 @@ try {
   await endLeftovers(join(dataDir, 'children.json'));
   await checkPort(host, port);
   ensurePackages();
-  if (!process.env.DATABASE_URL) {
+  // An empty variable is one that is not set.
+  const given = Object.fromEntries(Object.entries(process.env).filter(([, value]) => value !== ''));
+  if (!given.DATABASE_URL) {
     say('Starting PostgreSQL');
-    postgres = await ensurePostgres({ dataDir, log: say });
+    starting = ensurePostgres({ dataDir, log: say });
   }
+  const postgres = await starting;
+  if (ending) await ending;
   await ensureBuild();
   const address = `http://${host.includes(':') ? `[${host}]` : host}:${port}`;
-  const base = { ...process.env, HOST: host, PORT: String(port), DATA_DIR: dataDir, NODE_ENV: 'production' };
+  const base = { ...given, HOST: host, PORT: String(port), DATA_DIR: dataDir, NODE_ENV: 'production' };
   const fakes =
-    process.env.SMTP_URL && process.env.S3_ENDPOINT
-      ? {}
-      : await startAndRead('fakes', ['dist/fakes/main.mjs'], base);
+    given.SMTP_URL && given.S3_ENDPOINT ? {} : await startAndRead('fakes', ['dist/fakes/main.mjs'], base);
   const env = {
     MAIL_FROM: 'Thrum <thrum@localhost.example>',
     DEMO: '1',
-    AUTH_SECRET: process.env.AUTH_SECRET ?? keptSecret(dataDir),
+    AUTH_SECRET: given.AUTH_SECRET ?? keptSecret(dataDir),
     PUBLIC_URL: address,
     DATABASE_URL: postgres?.url,
     ...fakes,

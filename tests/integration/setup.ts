@@ -1,5 +1,5 @@
 import { randomBytes } from 'node:crypto';
-import { mkdtempSync, rmSync } from 'node:fs';
+import { chmodSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join, resolve } from 'node:path';
 import { build } from 'esbuild';
@@ -11,6 +11,8 @@ import { TEMPLATE } from './template';
 /** Once for all integration tests: PostgreSQL, a migrated template, the fakes, and the thread bundle. */
 export default async function setup(): Promise<() => Promise<void>> {
   const folder = mkdtempSync(join(tmpdir(), 'thrum-test-'));
+  // The postgres user passes through it to its own folder.
+  chmodSync(folder, 0o711);
   const postgres = await ensurePostgres({
     dataDir: folder,
     log: (line) => process.stdout.write(`${line}\n`),

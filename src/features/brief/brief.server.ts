@@ -18,7 +18,7 @@ export interface BriefAttribute {
   readonly observed: number;
   readonly mean: number | null;
   readonly counts: readonly number[];
-  /** Share that neighbours predict, and members who stand apart; null without a reading. */
+  /** Share that neighbours predict, and members who stand apart; null without a reading, or too few for the role. */
   readonly explained: number | null;
   readonly apart: number | null;
   readonly readingId: string | null;
@@ -135,14 +135,16 @@ export async function briefOf(snapshot: Snapshot, access: Access): Promise<Brief
     (one) => !one.islet,
   );
   const free = access.can('explore.open');
-  const groups = all
-    .filter((one) => free || one.size >= access.workspace.smallestGroup)
-    .map(({ letter, name, size, cut, volume }) => ({
-      letter,
-      name,
-      size,
-      leaving: volume > 0 ? cut / volume : 0,
-    }));
+  const least = access.workspace.smallestGroup;
+  const large = (count: number | null): boolean => free || (count ?? 0) >= least;
+  const shown = all.filter((one) => large(one.size));
+  const shownIndices = new Set(shown.map((one) => one.index));
+  const groups = shown.map(({ letter, name, size, cut, volume }) => ({
+    letter,
+    name,
+    size,
+    leaving: volume > 0 ? cut / volume : 0,
+  }));
   const [attributes, picture, before, openCases, unassigned, lastImport] = await Promise.all([
     attributesOf(snapshot),
     pictureOf(snapshot, grouping),
@@ -152,7 +154,13 @@ export async function briefOf(snapshot: Snapshot, access: Access): Promise<Brief
     snapshot.importId ? Import.findByPk(snapshot.importId) : null,
   ]);
   const weakest = [...groups].sort((a, b) => a.leaving - b.leaving)[0];
-  const read = attributes.filter((one) => one.explained !== null).sort((a, b) => b.explained! - a.explained!);
+  // For viewers a count of a few people is as telling as their names.
+  const masked = attributes.map((one) => ({
+    ...one,
+    ...(large(one.observed) ? {} : { mean: null, counts: [], trend: [] }),
+    ...(large(one.apart) ? {} : { apart: null, readingId: null }),
+  }));
+  const read = masked.filter((one) => one.explained !== null).sort((a, b) => b.explained! - a.explained!);
   return {
     facts: {
       members: snapshot.members,
@@ -165,8 +173,10 @@ export async function briefOf(snapshot: Snapshot, access: Access): Promise<Brief
           : null,
       mostShared: read[0] ? { attribute: read[0].name, explained: read[0].explained! } : null,
     },
-    attributes,
-    picture,
+    attributes: masked,
+    picture: free
+      ? picture
+      : picture.map((one) => (shownIndices.has(one.group ?? -1) ? one : { ...one, group: null })),
     groups,
     openCases,
     unassigned,

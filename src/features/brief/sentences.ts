@@ -5,7 +5,10 @@ export interface BriefFacts {
   readonly ties: number;
   readonly components: number;
   readonly largestComponent: number;
-  /** The group that keeps most of its ties to itself, with the share that leaves it; null without a grouping. */
+  /**
+   * The group that keeps to itself most, with its cut over its volume: of the contact that its members have, the
+   * share that leaves the group. Null without a grouping.
+   */
   readonly weakest: { readonly name: string; readonly leaving: number } | null;
   /** Attribute whose variation is shared most, with the share; null without a reading. */
   readonly mostShared: { readonly attribute: string; readonly explained: number } | null;
@@ -29,7 +32,7 @@ export function lead(facts: BriefFacts): string[] {
     );
   sentences.push(
     weakest
-      ? `${weakest.name} keeps ${formatPercent(1 - weakest.leaving)} of its ties to itself.`
+      ? `Of the contact that members of ${weakest.name} have, ${formatPercent(1 - weakest.leaving)} stays inside the group.`
       : 'No grouping has been made yet, so nothing can be said about where it could come apart.',
   );
   if (!mostShared) sentences.push('No reading has been taken yet.');

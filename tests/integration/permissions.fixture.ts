@@ -76,7 +76,7 @@ export async function makeWalkFixture(): Promise<WalkFixture> {
     })),
   );
   await m.Tie.create({ snapshotId: snapshot.id, source: 0, target: 1, weight: 1, count: 1 });
-  const { saveArray } = await import('@/features/network/index.server');
+  const { saveArray, savePicture } = await import('@/features/network/index.server');
   await m.sequelize.transaction(async (t) => {
     const arrays = {
       offsets: Int32Array.of(0, 1, 2),
@@ -88,6 +88,20 @@ export async function makeWalkFixture(): Promise<WalkFixture> {
       component: Int32Array.of(0, 0),
     };
     for (const [name, values] of Object.entries(arrays)) await saveArray(snapshot.id, name, values, t);
+    const network = {
+      n: 2,
+      offsets: arrays.offsets,
+      targets: arrays.targets,
+      weights: arrays.weights,
+      strength: arrays.strength,
+    };
+    const tie = { sources: Int32Array.of(0), targets: Int32Array.of(1), weights: Float64Array.of(1) };
+    await savePicture(
+      snapshot.id,
+      { network, x: arrays.x, y: arrays.y, component: arrays.component },
+      tie,
+      t,
+    );
   });
   const attribute = await m.Attribute.create({
     snapshotId: snapshot.id,

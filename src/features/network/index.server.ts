@@ -1,6 +1,6 @@
 export { auditExport } from './audit.server';
 export { landSnapshot, type Landing } from './land.server';
-export { networkPicture } from './picture.server';
+export { networkPicture, savePicture } from './picture.server';
 export { attributesOf, loadArray, loadAttribute, loadLabels, loadNetwork, saveArray } from './arrays.server';
 export { communityFor, snapshotFor } from './scope.server';
 export { createCommunity, listCommunities, listSnapshots, presentSnapshot } from './snapshots.server';

@@ -2,6 +2,7 @@ import { QueryTypes, type Transaction } from 'sequelize';
 import { Attribute, newId, sequelize, Snapshot } from '@/server/models';
 import { saveArray } from './arrays.server';
 import type { Shape } from './compute';
+import { savePicture } from './picture.server';
 import { summarise } from './summary';
 
 /** Everything that becomes one snapshot. Arrays run in member order. */
@@ -197,5 +198,6 @@ export async function landSnapshot(
   const arrays = { offsets, targets, weights, strength, x: shape.x, y: shape.y, component: shape.component };
   for (const [name, values] of Object.entries(arrays))
     await saveArray(snapshot.id, name, values, transaction);
+  await savePicture(snapshot.id, shape, ties, transaction);
   return snapshot;
 }

@@ -9,7 +9,8 @@ export const GET = serve(networkOperations.network, async (actor, { params, quer
   const etag = `"${snapshot.id}-1"`;
   const headers = { etag, 'cache-control': 'private, no-cache' };
   if (request.headers.get('if-none-match') === etag) return new Response(null, { status: 304, headers });
-  return new Response(await networkPicture(snapshot.id), {
-    headers: { ...headers, 'content-type': NETWORK_TYPE },
+  const { length, body } = await networkPicture(snapshot.id);
+  return new Response(body, {
+    headers: { ...headers, 'content-type': NETWORK_TYPE, 'content-length': String(length) },
   });
 });

@@ -10,6 +10,8 @@ export default defineConfig({
   devToolbar: { enabled: false },
   // Our own origin check in src/middleware covers JSON as well as forms, and knows PUBLIC_URL.
   security: { checkOrigin: false },
+  // Hashes of the page's own inline scripts; src/middleware/headers.ts makes the whole policy around them.
+  experimental: { csp: true },
   vite: {
     plugins: [tailwindcss()],
     ssr: {

@@ -20,6 +20,10 @@ export interface PlantOptions {
   readonly within?: number;
   readonly shifted?: number;
   readonly missing?: number;
+  /** Share of the members that hang on thin branches of the core. */
+  readonly branches?: number;
+  /** Components of three members apart from the rest, each with a level of its own. */
+  readonly islets?: number;
 }
 
 /** Places drawn in proportion to weights, by their running sums. */
@@ -28,12 +32,14 @@ function drawer(weights: Float64Array, places: readonly number[], random: Random
   const sums = places.map((i) => (total += weights[i]!));
   return () => {
     const at = random.next() * total;
-    return places[
-      Math.max(
-        0,
-        sums.findIndex((sum) => sum >= at),
-      )
-    ]!;
+    let low = 0;
+    let high = sums.length - 1;
+    while (low < high) {
+      const middle = (low + high) >> 1;
+      if (sums[middle]! >= at) high = middle;
+      else low = middle + 1;
+    }
+    return places[low]!;
   };
 }
 
@@ -52,23 +58,39 @@ export function plant(options: PlantOptions): Planted {
     within = 0.5,
     shifted = 0.03,
     missing = 0.2,
+    branches = 0,
+    islets = 0,
   } = options;
   const random = createRandom(seed + 7_000);
   const groups = Int32Array.from({ length: n }, () => random.int(k));
   const weights = Float64Array.from({ length: n }, () => (1 - random.next()) ** -0.35);
-  const all = drawer(weights, [...groups.keys()], random);
+  const connected = n - 3 * islets;
+  const core = connected - Math.round(branches * n);
+  const members = [...groups.keys()].slice(0, core);
+  const all = drawer(weights, members, random);
   const inside = Array.from({ length: k }, (_, group) =>
     drawer(
       weights,
-      [...groups.keys()].filter((i) => groups[i] === group),
+      members.filter((i) => groups[i] === group),
       random,
     ),
   );
   const pairs = new Set<number>();
-  while (pairs.size < (n * degree) / 2) {
+  while (pairs.size < (core * degree) / 2) {
     const a = all();
     const b = random.next() < mixing ? all() : inside[groups[a]!]!();
     if (a !== b) pairs.add(Math.min(a, b) * n + Math.max(a, b));
+  }
+  // A branch grows from any member that is there already and belongs where it hangs.
+  for (let i = core; i < connected; i++) {
+    const at = random.int(i);
+    groups[i] = groups[at]!;
+    pairs.add(at * n + i);
+  }
+  for (let i = connected; i < n; i++) {
+    const first = i - ((i - connected) % 3);
+    groups[i] = k + (first - connected) / 3;
+    if (i > first) pairs.add((i - 1) * n + i);
   }
   const keys = [...pairs];
   const network = buildNetwork(
@@ -77,13 +99,13 @@ export function plant(options: PlantOptions): Planted {
     Int32Array.from(keys, (key) => key % n),
     new Float64Array(keys.length).fill(1),
   );
-  const level = Float64Array.from({ length: k }, () => between * random.normal());
+  const level = Float64Array.from({ length: k + islets }, () => between * random.normal());
   const signal = diffused(network, random, within);
   const truth = signal.map((one, i) => one + level[groups[i]!]!);
   const planted = new Uint8Array(n);
   const values = truth.map((one, i) => {
-    const core = network.offsets[i + 1]! - network.offsets[i]! >= 5;
-    if (core && random.next() < shifted) planted[i] = 1;
+    const tied = network.offsets[i + 1]! - network.offsets[i]! >= 5;
+    if (tied && random.next() < shifted) planted[i] = 1;
     const shift = planted[i] === 1 ? (random.next() < 0.5 ? -5 : 5) : 0;
     const value = one + random.normal() + shift;
     return random.next() < missing ? NaN : value;

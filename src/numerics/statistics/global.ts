@@ -28,19 +28,18 @@ function sums(ties: ObservedTies, w: Float64Array): { s0: number; s1: number; s2
   const { n, offsets, targets } = ties;
   const rows = new Float64Array(n);
   const columns = new Float64Array(n);
-  const reverse = new Map<number, number>();
   let s0 = 0;
   for (let i = 0; i < n; i++)
     for (let k = offsets[i]!; k < offsets[i + 1]!; k++) {
       s0 += w[k]!;
       rows[i]! += w[k]!;
       columns[targets[k]!]! += w[k]!;
-      reverse.set(i * n + targets[k]!, w[k]!);
     }
   let s1 = 0;
+  // Rows are ascending and every tie stands in both, so the ties back to i come up in each row in turn.
+  const back = offsets.slice(0, n);
   for (let i = 0; i < n; i++)
-    for (let k = offsets[i]!; k < offsets[i + 1]!; k++)
-      s1 += (w[k]! + (reverse.get(targets[k]! * n + i) ?? 0)) ** 2 / 2;
+    for (let k = offsets[i]!; k < offsets[i + 1]!; k++) s1 += (w[k]! + w[back[targets[k]!]!++]!) ** 2 / 2;
   let s2 = 0;
   for (let i = 0; i < n; i++) s2 += (rows[i]! + columns[i]!) ** 2;
   const m2 = ties.squares / n;

@@ -1,5 +1,6 @@
 export { benjaminiHochberg, median } from './false-discovery';
 export { globalStatistics, type GlobalStatistic, type GlobalStatistics } from './global';
 export { localMoran, QUADRANTS, type LocalMoran } from './local';
+export { localPermutations, type LocalPermutations } from './local-permutations';
 export { erfc, twoSidedP } from './normal';
 export { observedTies, rowStandardised, type ObservedTies } from './weights';

@@ -1,10 +1,10 @@
 /**
- * Complementary error function to about 1e-15 relative, tails included: the power series below 2, the continued
- * fraction by Lentz's method above (Abramowitz & Stegun 1964, 7.1.6 and 7.1.14).
+ * Complementary error function to about 1e-14 relative, tails included: the power series below 1, where nothing
+ * cancels, the continued fraction by Lentz's method above (Abramowitz & Stegun 1964, 7.1.6 and 7.1.14).
  */
 export function erfc(x: number): number {
   if (x < 0) return 2 - erfc(-x);
-  if (x < 2) {
+  if (x < 1) {
     // erf(x) = 2/√π e^{−x²} Σ 2^k x^{2k+1} / (1·3·…·(2k+1))
     let term = x;
     let sum = x;

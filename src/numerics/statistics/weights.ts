@@ -20,9 +20,14 @@ export interface ObservedTies {
 /**
  * What autocorrelation statistics work on: the ties among members with a value. Mean and spread are over all of
  * them; n counts those with an observed neighbour (the `adjust.n` convention of Bivand & Wong 2018).
+ * @param alone whether members without an observed neighbour count in n: never in the product, but in some libraries
  * @throws UnanswerableError when fewer than four members enter, or all values are equal
  */
-export function observedTies(net: Network, values: Float64Array): ObservedTies {
+export function observedTies(
+  net: Network,
+  values: Float64Array,
+  alone: 'left-out' | 'counted' = 'left-out',
+): ObservedTies {
   const place = new Int32Array(net.n).fill(-1);
   const members: number[] = [];
   for (let i = 0; i < net.n; i++)
@@ -65,7 +70,8 @@ export function observedTies(net: Network, values: Float64Array): ObservedTies {
       'constant-attribute',
       'All observed values are equal, so nothing can be shared or stand apart.',
     );
-  return { n, entered, members: Int32Array.from(members), offsets, targets, weights, z, squares };
+  const counted = alone === 'counted' ? n : entered;
+  return { n, entered: counted, members: Int32Array.from(members), offsets, targets, weights, z, squares };
 }
 
 /** Weights divided by their row's sum: style W. */

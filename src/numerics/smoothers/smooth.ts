@@ -69,9 +69,20 @@ function wild(z: Float64Array, observed: Uint8Array): Uint8Array {
 const rangeFor = (kind: LaplacianKind, strength: Strength['kind']): [number, number] =>
   strength === 'gcv' && kind === 'combinatorial' ? [-4, 4] : [-3, 5];
 
+/**
+ * Boundary-avoiding penalty on −2 log restricted likelihood, after Chung, Rabe-Hesketh, Dorie, Gelman & Liu 2013, here
+ * on the share 1/√(1 + α) of f. Without it a weak variation along ties is often estimated as exactly none, and every
+ * interval is then too narrow. It is flat where f is strong, and fades beside the likelihood as members are added.
+ */
+const boundary = (alpha: number): number => Math.log1p(alpha);
+/** Its derivative by log α. */
+const boundarySlope = (alpha: number): number => alpha / (1 + alpha);
+/** Likelihood ratio below which variation along ties is not told from none: 5 % of ½χ²₀ + ½χ²₁ (Self & Liang 1987). */
+const NO_VARIATION = 2.706;
+
 const NOTES = {
   low: 'The fit found no stretch over which neighbours’ scores agree; the smoothed score stays close to the recorded one.',
-  high: 'Beyond the levels of the groups, neighbours do not resemble each other in this attribute.',
+  high: 'Beyond the levels of the groups, no resemblance of neighbours can be told from chance in this attribute.',
 } as const;
 
 /**
@@ -108,11 +119,17 @@ function smoothExactly(problem: Problem, strength: Strength, robust: boolean, wa
   const choose = (system: ExactSystem): number => {
     if (strength.kind === 'given') return strength.alpha;
     const found = searchStrength(
-      (alpha) => (strength.kind === 'gcv' ? system.crossValidation(alpha) : system.criterion(alpha)),
+      (alpha) =>
+        strength.kind === 'gcv' ? system.crossValidation(alpha) : system.criterion(alpha) + boundary(alpha),
       low,
       high,
     );
     end = found.end;
+    if (
+      strength.kind === 'restricted-likelihood' &&
+      system.criterion(10 ** high) - system.criterion(found.alpha) < NO_VARIATION
+    )
+      end = 'high';
     return found.alpha;
   };
   const rounds = robust ? ROUNDS : 0;
@@ -154,7 +171,9 @@ function smoothLarge(
             near === undefined ? high : Math.min(high, near + 1),
             watch,
           );
-    end = found.end;
+    // Only the first search reaches far enough to compare with no variation at all.
+    if (near === undefined) end = found.flat === true ? 'high' : found.end;
+    else end = found.end ?? end;
     return found.alpha;
   };
   let alpha = choose(new LargeSystem(problem, zeroed, seed, watch));
@@ -185,15 +204,18 @@ function smoothLarge(
 interface Found {
   alpha: number;
   end: 'low' | 'high' | null;
+  /** Whether the likelihood at the upper end is as good, but for chance. */
+  flat?: boolean;
 }
 
 /**
  * Minimum of a criterion of which only the derivative by log α is known, with some noise: the derivative is summed
- * up over about decades, and the lowest point is refined by bisection to 7 %.
+ * up over about decades, the penalty included, and the lowest point is refined by bisection to 7 %.
  */
 function rootOf(score: (alpha: number) => number, low: number, high: number, watch?: Watch): Found {
   const places: number[] = [];
   const slopes: number[] = [];
+  const penalised = (alpha: number): number => score(alpha) + boundarySlope(alpha);
   const step = high - low > 2.5 ? (high - low) / 6 : (high - low) / 2;
   for (let place = low; place <= high + 1e-9; place += step) {
     watch?.progress?.(
@@ -201,7 +223,7 @@ function rootOf(score: (alpha: number) => number, low: number, high: number, wat
       'Estimating how far neighbours resemble each other',
     );
     places.push(place);
-    slopes.push(score(10 ** place));
+    slopes.push(penalised(10 ** place));
   }
   let criterion = 0;
   let best = 0;
@@ -213,15 +235,18 @@ function rootOf(score: (alpha: number) => number, low: number, high: number, wat
       best = k;
     }
   }
+  const last = places.length - 1;
+  const unpenalised = (k: number, sum: number): number => sum * Math.LN10 - boundary(10 ** places[k]!);
+  const flat = unpenalised(last, criterion) - unpenalised(best, lowest) < NO_VARIATION;
   if (best === 0) return { alpha: 10 ** low, end: 'low' };
-  if (best === places.length - 1) return { alpha: 10 ** high, end: 'high' };
+  if (best === last) return { alpha: 10 ** high, end: 'high' };
   let [a, b] = slopes[best]! > 0 ? [places[best - 1]!, places[best]!] : [places[best]!, places[best + 1]!];
   while (b - a > 0.03) {
     const middle = (a + b) / 2;
-    if (score(10 ** middle) > 0) b = middle;
+    if (penalised(10 ** middle) > 0) b = middle;
     else a = middle;
   }
-  return { alpha: 10 ** ((a + b) / 2), end: null };
+  return { alpha: 10 ** ((a + b) / 2), end: null, flat };
 }
 
 /** Minimum on half decades, refined by a parabola. */

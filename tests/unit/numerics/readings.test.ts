@@ -179,4 +179,23 @@ describe('what cannot be answered is said in words', () => {
     }).columns;
     expect(smoothed.every(Number.isFinite)).toBe(true);
   });
+
+  test('ten thousand components of two members, and a star of a hundred thousand, are answered', () => {
+    const starts = Int32Array.from({ length: 10_000 }, (_, i) => 2 * i);
+    const pairs = buildNetwork(
+      20_000,
+      starts,
+      starts.map((i) => i + 1),
+      new Float64Array(10_000).fill(1),
+    );
+    const rays = Int32Array.from({ length: 99_999 }, (_, i) => i + 1);
+    const star = buildNetwork(100_000, new Int32Array(99_999), rays, new Float64Array(99_999).fill(1));
+    for (const network of [pairs, star]) {
+      const values = Float64Array.from({ length: network.n }, (_, i) => Math.sin(i * i));
+      const { columns, residual, alpha } = read(network, { values, filter: { kind: 'two-level' } });
+      expect(columns.smoothed.every(Number.isFinite)).toBe(true);
+      expect(Number.isFinite(alpha)).toBe(true);
+      expect(residual).toBeLessThanOrEqual(1e-10);
+    }
+  });
 });

@@ -57,7 +57,7 @@ function Form({
     });
   };
   return (
-    <form className="col auth-form" onSubmit={onSubmit}>
+    <form className="col auth-form" method="post" onSubmit={onSubmit}>
       {error && (
         <Banner tone="error" live>
           {error}

@@ -43,7 +43,7 @@ function sourcesHash() {
 }
 
 async function bundle() {
-  const { build } = await import('esbuild');
+  const { build, stop } = await import('esbuild');
   await build({
     entryPoints: Object.fromEntries(Object.entries(BUNDLES).map(([name, entry]) => [name, entry])),
     outdir: 'dist',
@@ -56,6 +56,7 @@ async function bundle() {
     sourcemap: 'linked',
     logLevel: 'error',
   });
+  await stop();
 }
 
 /** Builds pages and programs unless the last build was of exactly these sources. */

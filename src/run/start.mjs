@@ -94,7 +94,7 @@ try {
   say('Bringing the database up to date');
   await runOnce('The migration', ['dist/worker/migrate.mjs'], env);
   if (env.DEMO === '1') {
-    say('Checking the demo (the first time it is made, which takes a minute)');
+    say('Checking the demo (the first time it is made, which takes about two minutes)');
     await runOnce('Making the demo', ['dist/worker/seed.mjs'], env);
   }
   if (ending) await ending;

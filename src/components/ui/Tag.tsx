@@ -19,7 +19,7 @@ export function tagStyle(letter: string): CSSProperties {
 
 /** The square woven label of a group. */
 export function Tag({ letter, size = 'default', name }: TagProps) {
-  const classes = cx('tag', size === 'small' && 'xs', size === 'large' && 'l', letter.length > 1 && 'two');
+  const classes = cx('tag', size === 'small' && 'xs', size === 'large' && 'l', letter.length > 1 && 'pair');
   return (
     <span className={classes} style={tagStyle(letter)} title={name}>
       {letter}

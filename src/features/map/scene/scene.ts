@@ -31,6 +31,7 @@ interface Inks {
   faded: string;
   outline: string;
   mark: string;
+  ground: string;
   ink: string;
 }
 
@@ -41,13 +42,14 @@ function inksOf(style: CSSStyleDeclaration): Inks {
   const sheet = readToken(style, '--c-sheet');
   const tie = readToken(style, '--c-tie');
   return {
-    edge: mix(tie, sheet, 0.22),
+    edge: mix(tie, sheet, 0.34),
     edgeFaint: mix(tie, sheet, 0.08),
     edgeNear: mix(readToken(style, '--c-ink'), sheet, 0.85),
     faded: mix(readToken(style, '--c-line'), sheet, 0.55),
     outline: mix(readToken(style, '--c-node-edge'), sheet, 1),
     mark: mix(readToken(style, '--c-madder'), sheet, 1),
     ink: mix(readToken(style, '--c-ink'), sheet, 1),
+    ground: mix(sheet, sheet, 1),
   };
 }
 
@@ -95,13 +97,14 @@ export class MapScene {
       labelFont: style.getPropertyValue('--font'),
       labelSize: 12,
       labelWeight: '600',
-      labelColor: { color: this.inks.ink },
-      labelRenderedSizeThreshold: 7,
+      // From afar the groups are named; members only once there is room between them.
+      labelRenderedSizeThreshold: 11,
       labelDensity: 0.6,
       minCameraRatio: 0.02,
       maxCameraRatio: 4,
       stagePadding: 36,
       zIndex: true,
+      defaultDrawNodeLabel: (context, data, settings) => this.drawLabel(context, data, settings),
       // Our own hover card says more than sigma's label box.
       defaultDrawNodeHover: () => undefined,
       nodeReducer: (key, data) => this.drawNode(Number(key), data),
@@ -166,10 +169,41 @@ export class MapScene {
     return { size: 0.5, color: out ? this.inks.edgeFaint : this.inks.edge, zIndex: out ? 0 : 1 };
   }
 
+  /** A name beside its member, with a rim of the ground's colour so that it reads on top of others. */
+  private drawLabel(
+    context: CanvasRenderingContext2D,
+    data: Pick<NodeDisplayData, 'x' | 'y' | 'size'> & { label: string | null },
+    settings: { labelSize: number; labelFont: string; labelWeight: string },
+  ): void {
+    if (!data.label) return;
+    const x = data.x + data.size + 4;
+    const y = data.y + settings.labelSize / 3;
+    context.font = `${settings.labelWeight} ${settings.labelSize}px ${settings.labelFont}`;
+    context.lineJoin = 'round';
+    context.lineWidth = 4;
+    context.strokeStyle = this.inks.ground;
+    context.strokeText(data.label, x, y);
+    context.fillStyle = this.inks.ink;
+    context.fillText(data.label, x, y);
+  }
+
+  /** Redraws only what the pointer left and reached: a full pass over 100,000 members takes longer than a frame. */
   private hover(ordinal: number | null): void {
+    const left = this.paint.hovered ?? this.paint.focused;
+    const touched = new Set([left, ...this.paint.near]);
     this.paint.hovered = ordinal;
     this.markNear();
-    this.sigma.refresh({ skipIndexation: true });
+    const reached = ordinal ?? this.paint.focused;
+    for (const i of [reached, ...this.paint.near]) touched.add(i);
+    const keys = (members: Iterable<number | null>): string[] =>
+      [...members].filter((i) => i !== null).map(String);
+    this.sigma.refresh({
+      partialGraph: {
+        nodes: keys(touched),
+        edges: keys(new Set([left, reached])).flatMap((key) => this.graph.edges(key)),
+      },
+      skipIndexation: true,
+    });
   }
 
   private markNear(): void {
@@ -210,7 +244,7 @@ export class MapScene {
   /** Reads the tokens again after a change of theme. */
   retheme(): void {
     this.inks = inksOf(getComputedStyle(this.container));
-    this.sigma.setSetting('labelColor', { color: this.inks.ink });
+    this.sigma.refresh({ skipIndexation: true });
     this.regionLayer.draw();
   }
 

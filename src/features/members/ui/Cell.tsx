@@ -24,7 +24,7 @@ export function Cell({
     return (
       <span className="row">
         <Tag letter={group.letter} />
-        <span className="x1">{group.name ?? ''}</span>
+        <span className="x1">{group.name ?? `Group ${group.letter}`}</span>
       </span>
     );
   }

@@ -1,5 +1,6 @@
 import { createNodeBorderProgram } from '@sigma/node-border';
 import Sigma from 'sigma';
+import { EdgeLineProgram, NodePointProgram } from 'sigma/rendering';
 import type { CameraState, EdgeDisplayData, NodeDisplayData } from 'sigma/types';
 import { readToken, type Rgb } from '@/lib/ramps';
 import type { EdgeAttributes, MapGraph, NodeAttributes } from './graph';
@@ -55,11 +56,29 @@ function inksOf(style: CSSStyleDeclaration): Inks {
 
 type Drawn = Partial<NodeDisplayData> & { borderColor: string; borderSize: number };
 
+const richPrograms = {
+  nodeProgramClasses: {
+    bordered: createNodeBorderProgram<NodeAttributes, EdgeAttributes>({
+      borders: [
+        { size: { attribute: 'borderSize', defaultValue: 0.14 }, color: { attribute: 'borderColor' } },
+        { size: { fill: true }, color: { attribute: 'color' } },
+      ],
+    }),
+  },
+};
+
+/** Points and lines one pixel wide: borders and feathered ties cost a software renderer seconds a frame on large networks. */
+const plainPrograms = {
+  nodeProgramClasses: { bordered: NodePointProgram<NodeAttributes, EdgeAttributes> },
+  edgeProgramClasses: { line: EdgeLineProgram<NodeAttributes, EdgeAttributes> },
+};
+
 /** The WebGL picture: one sigma instance, its reducers, and the layer of group regions beneath. */
 export class MapScene {
   readonly sigma: Sigma<NodeAttributes, EdgeAttributes>;
   private readonly regionLayer: RegionLayer;
   private readonly paint: Paint;
+  private readonly large: boolean;
   private inks: Inks;
 
   constructor(
@@ -80,20 +99,13 @@ export class MapScene {
       hovered: null,
       near: new Set(),
     };
-    const large = graph.order > 20_000;
+    this.large = graph.order > 20_000;
     this.sigma = new Sigma<NodeAttributes, EdgeAttributes>(graph, container, {
       allowInvalidContainer: true,
       defaultNodeType: 'bordered',
-      nodeProgramClasses: {
-        bordered: createNodeBorderProgram<NodeAttributes, EdgeAttributes>({
-          borders: [
-            { size: { attribute: 'borderSize', defaultValue: 0.14 }, color: { attribute: 'borderColor' } },
-            { size: { fill: true }, color: { attribute: 'color' } },
-          ],
-        }),
-      },
-      hideEdgesOnMove: graph.size > 20_000 || large,
-      hideLabelsOnMove: large,
+      ...(this.large ? plainPrograms : richPrograms),
+      hideEdgesOnMove: graph.size > 20_000 || this.large,
+      hideLabelsOnMove: this.large,
       labelFont: style.getPropertyValue('--font'),
       labelSize: 12,
       labelWeight: '600',
@@ -135,14 +147,14 @@ export class MapScene {
   }
 
   private drawNode(i: number, data: NodeAttributes): Drawn {
-    const { colours, sizes, mask, names, selected, focused, hovered, near } = this.paint;
+    const { sizes, mask, names, selected, focused, hovered, near } = this.paint;
     const out = mask !== null && mask[i] === 0;
     const marked = selected.has(i) || i === focused || i === hovered;
     return {
       x: data.x,
       y: data.y,
       size: sizes[i]! * (marked ? 1.7 : out ? 0.7 : 1),
-      color: out && !marked ? this.inks.faded : (colours[i] ?? this.inks.faded),
+      color: this.fillOf(i, marked, out),
       borderColor: selected.has(i)
         ? this.inks.mark
         : marked
@@ -157,6 +169,13 @@ export class MapScene {
       hidden: false,
       zIndex: marked ? 3 : near.has(i) ? 2 : out ? 0 : 1,
     };
+  }
+
+  private fillOf(i: number, marked: boolean, out: boolean): string {
+    const { colours, selected } = this.paint;
+    // A point has no border to be marked by.
+    if (marked && this.large) return selected.has(i) ? this.inks.mark : this.inks.ink;
+    return out && !marked ? this.inks.faded : (colours[i] ?? this.inks.faded);
   }
 
   private drawEdge(key: string, data: EdgeAttributes): Partial<EdgeDisplayData> {

@@ -20,17 +20,20 @@ export interface Filter {
   apply(x: Float64Array, out: Float64Array): void;
 }
 
-/** @param low the lowest wanted λ, by which `growth` is measured */
+/**
+ * @param low the lowest wanted λ, by which `growth` is measured
+ * @param spare a vector that `apply` may use
+ */
 export function chebyshevFilter(
   op: LaplacianOperator,
   cut: number,
   top: number,
   low: number,
   degree: number,
+  spare: Float64Array,
 ): Filter {
   const centre = (cut + top) / 2;
   const half = (top - cut) / 2;
-  const spare = new Float64Array(op.n);
   return {
     degree,
     cut,

@@ -4,6 +4,7 @@ import { NotConvergedError } from '../types';
 import { factoriseLaplacian, type LaplacianFactor } from './elimination';
 import { Krylov } from './krylov';
 import type { Pairs } from './rayleigh-ritz';
+import type { Supply } from './supply';
 import { axpy, norm, randomUnit } from './vectors';
 
 /** out = (A − shift)⁻¹ x on the complement of the null vector of A. */
@@ -82,12 +83,13 @@ export function inversePairs(
   outside: readonly Float64Array[],
   above: number | null,
   random: Random,
+  supply: Supply,
   look: () => void,
 ): Pairs {
   const capacity = Math.min(op.n - outside.length, Math.max(30, 2 * count + 10));
   const keep = Math.min(capacity - 2, count + Math.floor(0.4 * (capacity - count)));
-  const krylov = new Krylov(op.n, capacity, outside, random);
-  krylov.begin(randomUnit(op.n, random, outside));
+  const krylov = new Krylov(op.n, capacity, outside, random, supply);
+  krylov.begin((start) => randomUnit(start, random, outside));
   for (let cycle = 0; cycle < 200; cycle++) {
     while (!krylov.full) {
       krylov.step(inverse.solve);
@@ -102,9 +104,13 @@ export function inversePairs(
         krylov.size >= 12 &&
         (ritz.values[0]! + ritz.residuals[0]!) * (above - inverse.shift) < 1
       ) {
+        krylov.release();
         return { values: [], vectors: [], residuals: [] };
       }
-      if (settled || exhausted) return measured(op, inverse.shift, krylov, ritz, count);
+      if (!settled && !exhausted) continue;
+      const pairs = measured(op, inverse.shift, krylov, ritz, count);
+      krylov.release();
+      return pairs;
     }
     krylov.restart(keep, krylov.ritz());
   }

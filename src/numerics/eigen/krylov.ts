@@ -1,6 +1,7 @@
 import type { Random } from '../random';
 import { symmetricEigen } from './dense';
-import { addCombination, axpy, dot, norm, project, randomUnit, scale } from './vectors';
+import type { Supply } from './supply';
+import { addCombination, axpy, dot, norm, project, randomUnit, rotate, scale } from './vectors';
 
 /**
  * A thick-restart Lanczos basis (Wu & Simon 2000) with full reorthogonalisation, for any symmetric operator.
@@ -23,18 +24,19 @@ export class Krylov {
     private readonly capacity: number,
     private readonly outside: readonly Float64Array[],
     private readonly random: Random,
+    private readonly supply: Supply,
   ) {
     this.projected = new Float64Array(capacity * capacity);
     this.h = new Float64Array(Math.max(capacity, outside.length) + 1);
   }
 
-  /** Empties the basis and begins again with one unit vector, which must be orthogonal to the outside set. */
-  begin(start: Float64Array): void {
+  /** Empties the basis and begins again with the unit vector that is put in, which must be orthogonal to the outside set. */
+  begin(fill: (start: Float64Array) => void): void {
     this.size = 0;
     this.beta = 0;
     this.kept = 0;
     this.projected.fill(0);
-    this.slot(0).set(start);
+    fill(this.slot(0));
   }
 
   get full(): boolean {
@@ -78,7 +80,7 @@ export class Krylov {
     // An invariant subspace: go on in a fresh direction, decoupled from it.
     this.beta = 0;
     if (this.size + this.outside.length < this.n) {
-      w.set(randomUnit(this.n, this.random, [...this.outside, ...this.basis.slice(0, this.size)]));
+      randomUnit(w, this.random, [...this.outside, ...this.basis.slice(0, this.size)]);
     }
   }
 
@@ -102,9 +104,9 @@ export class Krylov {
     return { values, rows, residuals };
   }
 
-  /** Σ_j row[j] v_j as a new vector. */
+  /** Σ_j row[j] v_j as a vector of the supply. */
   combination(row: Float64Array): Float64Array {
-    const x = new Float64Array(this.n);
+    const x = this.supply.take();
     addCombination(this.basis, row.length, row, 1, x);
     return x;
   }
@@ -112,12 +114,11 @@ export class Krylov {
   /** Keeps the first `keep` Ritz vectors and the next direction; drops the rest. */
   restart(keep: number, ritz: { values: Float64Array; rows: Float64Array }): void {
     const m = this.size;
-    const kept = Array.from({ length: keep }, (_, r) =>
-      this.combination(ritz.rows.subarray(r * m, (r + 1) * m)),
-    );
+    rotate(this.basis, m, keep, ritz.rows, this.supply);
     const next = this.basis[m]!;
-    for (let r = 0; r < keep; r++) this.basis[r] = kept[r]!;
+    this.supply.give(...this.basis.slice(keep, m));
     this.basis[keep] = next;
+    this.supply.give(...this.basis.slice(m + 1));
     this.basis.length = keep + 1;
     this.projected.fill(0);
     for (let r = 0; r < keep; r++) this.projected[r * this.capacity + r] = ritz.values[r]!;
@@ -131,6 +132,12 @@ export class Krylov {
   }
 
   private slot(at: number): Float64Array {
-    return (this.basis[at] ??= new Float64Array(this.n));
+    return (this.basis[at] ??= this.supply.take());
+  }
+
+  /** Gives every vector back. */
+  release(): void {
+    this.supply.give(...this.basis);
+    this.basis.length = 0;
   }
 }

@@ -1,6 +1,7 @@
 import type { Operator } from '../operators';
 import { symmetricEigen } from './dense';
-import { addCombination, axpy, dot, norm, orthogonalise, scale } from './vectors';
+import type { Supply } from './supply';
+import { axpy, dot, norm, orthogonalise, rotate, scale } from './vectors';
 
 export interface Pairs {
   /** Ascending. */
@@ -13,9 +14,14 @@ export interface Pairs {
 
 /**
  * The best eigenpairs of A within a space (Rayleigh–Ritz), with true residuals.
- * @param span linearly independent vectors; made orthonormal here, and orthogonal to `outside`
+ * @param span linearly independent vectors; made orthonormal here, and orthogonal to `outside`; they become the result
  */
-export function rayleighRitz(op: Operator, span: Float64Array[], outside: readonly Float64Array[]): Pairs {
+export function rayleighRitz(
+  op: Operator,
+  span: Float64Array[],
+  outside: readonly Float64Array[],
+  supply: Supply,
+): Pairs {
   const k = span.length;
   for (let i = 0; i < k; i++) {
     const others = [...outside, ...span.slice(0, i)];
@@ -23,7 +29,7 @@ export function rayleighRitz(op: Operator, span: Float64Array[], outside: readon
     scale(span[i]!, 1 / norm(span[i]!));
   }
   const images = span.map((x) => {
-    const out = new Float64Array(op.n);
+    const out = supply.take();
     op.multiply(x, out);
     return out;
   });
@@ -32,18 +38,12 @@ export function rayleighRitz(op: Operator, span: Float64Array[], outside: readon
     for (let j = i; j < k; j++) g[i * k + j] = g[j * k + i] = dot(span[i]!, images[j]!);
   const eigen = symmetricEigen(g, k);
   const values = Array.from(eigen.values);
-  const vectors: Float64Array[] = [];
-  const residuals: number[] = [];
-  const r = new Float64Array(op.n);
-  for (let l = 0; l < k; l++) {
-    const row = eigen.vectors.subarray(l * k, (l + 1) * k);
-    const x = new Float64Array(op.n);
-    addCombination(span, k, row, 1, x);
-    r.fill(0);
-    addCombination(images, k, row, 1, r);
-    axpy(-values[l]!, x, r);
-    vectors.push(x);
-    residuals.push(norm(r));
-  }
-  return { values, vectors, residuals };
+  rotate(span, k, k, eigen.vectors, supply);
+  rotate(images, k, k, eigen.vectors, supply);
+  const residuals = images.map((r, l) => {
+    axpy(-values[l]!, span[l]!, r);
+    return norm(r);
+  });
+  supply.give(...images);
+  return { values, vectors: span, residuals };
 }

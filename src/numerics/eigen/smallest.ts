@@ -7,6 +7,7 @@ import { inversePairs, shiftedInverse, type Inverse } from './inverse';
 import { Krylov } from './krylov';
 import { rayleighRitz, type Pairs } from './rayleigh-ritz';
 import { best, share } from './search-helpers';
+import { Supply } from './supply';
 import { addCombination, norm, orthogonalise, randomUnit, scale } from './vectors';
 
 export interface SmallestOptions {
@@ -40,15 +41,26 @@ export function smallestEigenpairs(
   watch?: Watch,
 ): SmallestPairs {
   const search = new Search(op, options, watch);
-  let pairs = search.find(options.count, options.deflate, null);
+  const deflate = options.deflate.map((one) => search.copy(one));
+  let pairs = search.find(options.count, deflate, null);
   for (let round = 0; ; round++) {
     const last = pairs.values[options.count - 1]!;
-    if (options.count + options.deflate.length >= op.n || round > 2 * options.count) break;
-    const missed = search.probe(last, [...options.deflate, ...pairs.vectors]);
+    if (options.count + deflate.length >= op.n || round > 2 * options.count) break;
+    const missed = search.probe(last, [...deflate, ...pairs.vectors]);
     if (missed === null) break;
     pairs = best(pairs, missed, options.count);
   }
-  return { ...pairs, norm: search.norm, products: search.products };
+  const vectors = pairs.vectors.map((one) => new Float64Array(one));
+  return { ...pairs, vectors, norm: search.norm, products: search.products };
+}
+
+const capacityFor = (count: number): number => Math.max(40, 2 * count + 24);
+
+/** Bytes of all vectors that a search for `count` pairs of an operator on R^n has at one time. */
+export function searchBytes(n: number, count: number): number {
+  const capacity = capacityFor(count);
+  const vectors = capacity + 4 * count + 12;
+  return vectors * (Math.ceil(n / 8) * 64) + 8 * (capacity * capacity + 2 * 1_024 * capacity);
 }
 
 /** Products after which a factorisation is tried: the gap is small, and on a thin network the inverse is cheap. */
@@ -60,6 +72,8 @@ class Search {
   norm = 0;
   products = 0;
   private readonly random: Random;
+  private readonly supply: Supply;
+  private readonly spare: Float64Array;
   private readonly limit: number;
   private top = 0;
   /** Share done, which never falls: a probe after the search reports what the search had reached. */
@@ -75,6 +89,14 @@ class Search {
   ) {
     this.random = createRandom(options.seed);
     this.limit = options.maxProducts ?? 40_000;
+    this.supply = new Supply(() => op.vector());
+    this.spare = this.supply.take();
+  }
+
+  copy(x: Float64Array): Float64Array {
+    const copy = this.supply.take();
+    copy.set(x);
+    return copy;
   }
 
   /** Is there an eigenvalue below `bound` in the complement of `outside`? Returns that pair, or null. */
@@ -97,9 +119,24 @@ class Search {
     const { op } = this;
     if (this.inverse) return this.byInverse(this.inverse, count, outside, above);
     const room = op.n - outside.length;
-    const capacity = Math.min(room, Math.max(40, 2 * count + 24));
-    const krylov = new Krylov(op.n, capacity, outside, this.random);
-    krylov.begin(randomUnit(op.n, this.random, outside));
+    const capacity = Math.min(room, capacityFor(count));
+    const krylov = new Krylov(op.n, capacity, outside, this.random, this.supply);
+    krylov.begin((start) => randomUnit(start, this.random, outside));
+    try {
+      return this.search(krylov, capacity, count, outside, above);
+    } finally {
+      krylov.release();
+    }
+  }
+
+  private search(
+    krylov: Krylov,
+    capacity: number,
+    count: number,
+    outside: readonly Float64Array[],
+    above: number | null,
+  ): Pairs {
+    const { op } = this;
     let filter = this.filter;
     if (filter === null || above === null) {
       const early = this.plain(krylov, count, Math.min(capacity, Math.max(24, count + 16)), outside);
@@ -133,12 +170,13 @@ class Search {
         const span = Array.from({ length: count }, (_, r) =>
           krylov.combination(ritz.rows.subarray(r * m, (r + 1) * m)),
         );
-        const pairs = rayleighRitz(op, span, outside);
+        const pairs = rayleighRitz(op, span, outside, this.supply);
         this.products += count;
         if (pairs.residuals.every((residual) => residual <= this.options.tolerance * this.norm)) {
           this.filter = filter;
           return pairs;
         }
+        this.supply.give(...pairs.vectors);
         const worst = Math.max(...pairs.residuals);
         margin = (0.7 * Math.max(...estimates)) / worst;
         if (!(margin > 1e-12)) throw this.failure(worst);
@@ -159,7 +197,7 @@ class Search {
           cut,
           capacity,
         );
-        krylov.begin(start);
+        this.restartFrom(krylov, start);
       }
     }
   }
@@ -170,7 +208,7 @@ class Search {
     outside: readonly Float64Array[],
     above: number | null,
   ): Pairs {
-    const pairs = inversePairs(this.op, inverse, count, outside, above, this.random, () => {
+    const pairs = inversePairs(this.op, inverse, count, outside, above, this.random, this.supply, () => {
       this.products++;
       this.look((this.done = Math.max(this.done, 0.5)));
     });
@@ -203,9 +241,11 @@ class Search {
     const span = Array.from({ length: count }, (_, r) =>
       krylov.combination(ritz.rows.subarray(r * m, (r + 1) * m)),
     );
-    const pairs = rayleighRitz(op, span, outside);
+    const pairs = rayleighRitz(op, span, outside, this.supply);
     this.products += count;
-    return pairs.residuals.every((residual) => residual <= bar) ? pairs : null;
+    if (pairs.residuals.every((residual) => residual <= bar)) return pairs;
+    this.supply.give(...pairs.vectors);
+    return null;
   }
 
   private firstFilter(
@@ -220,13 +260,25 @@ class Search {
     const wanted = -ritz.values[Math.min(last, count - 1)]!;
     const cut = -ritz.values[Math.min(last, count + Math.floor(0.2 * (last - count)))]!;
     const start = this.mixture(krylov, ritz, Math.min(last, count + 2), outside);
-    krylov.begin(start);
+    this.restartFrom(krylov, start);
     return this.makeFilter(low, wanted, cut, capacity);
+  }
+
+  private restartFrom(krylov: Krylov, start: Float64Array): void {
+    krylov.begin((first) => first.set(start));
+    this.supply.give(start);
   }
 
   private makeFilter(low: number, wanted: number, cut: number, capacity: number): Filter {
     const a = Math.min(0.9 * this.top, Math.max(cut, wanted + 0.1 * (wanted - low), 1e-12 * this.top));
-    return chebyshevFilter(this.op, a, this.top, low, chooseDegree(this.op, low, a, this.top, capacity));
+    return chebyshevFilter(
+      this.op,
+      a,
+      this.top,
+      low,
+      chooseDegree(this.op, low, a, this.top, capacity),
+      this.spare,
+    );
   }
 
   /** A start for a new Krylov space: the sum of the wanted Ritz vectors, so that nothing gained is lost. */
@@ -239,7 +291,7 @@ class Search {
     const m = krylov.size;
     const row = new Float64Array(m);
     for (let r = 0; r < parts; r++) for (let j = 0; j < m; j++) row[j]! += ritz.rows[r * m + j]!;
-    const start = new Float64Array(this.op.n);
+    const start = this.supply.take();
     addCombination(krylov.basis, m, row, 1, start);
     orthogonalise(start, outside);
     scale(start, 1 / norm(start));

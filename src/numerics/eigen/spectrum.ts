@@ -1,8 +1,9 @@
 import { componentMembers, components, subnetwork } from '../network';
-import { laplacianOperator, type LaplacianOperator } from '../operators';
+import { KernelMemory } from '../kernels';
+import { laplacianOperator, matrixBytes, type LaplacianOperator } from '../operators';
 import { UnanswerableError, type LaplacianKind, type Network, type Watch } from '../types';
 import { symmetricEigen } from './dense';
-import { smallestEigenpairs } from './smallest';
+import { searchBytes, smallestEigenpairs, type SmallestPairs } from './smallest';
 import { addCombination, axpy, fixSign, norm, scale } from './vectors';
 
 export interface SpectrumOptions {
@@ -84,11 +85,15 @@ function solvePart(op: LaplacianOperator, count: number, options: SpectrumOption
     );
   }
   const tolerance = options.tolerance ?? 1e-8;
-  const found = smallestEigenpairs(
-    op,
-    { count: count - 1, tolerance, deflate: [zero], seed: options.seed ?? 1 },
-    watch,
-  );
+  const search = { count: count - 1, tolerance, deflate: [zero], seed: options.seed ?? 1 };
+  const bytes = matrixBytes(op.network) + searchBytes(n, count - 1);
+  const memory = new KernelMemory(n, bytes, op.network.targets.length);
+  let found: SmallestPairs;
+  try {
+    found = smallestEigenpairs(laplacianOperator(op.network, op.kind, op.tau, memory), search, watch);
+  } finally {
+    memory.close();
+  }
   return {
     values: [0, ...found.values.map((value) => Math.max(0, value))],
     vectors: [zero, ...found.vectors],

@@ -1,7 +1,14 @@
+import { KernelMemory } from '../kernels';
 import type { Random } from '../random';
+import type { Supply } from './supply';
 
-/** Dense vector kernels; all arrays in one call have the same length. */
+/**
+ * Dense vector kernels; all arrays in one call have the same length. Where all of them lie in one kernel memory, compiled
+ * code does the work; otherwise the plain loops below, which differ by rounding only.
+ */
 export function dot(x: Float64Array, y: Float64Array): number {
+  const memory = KernelMemory.of(x);
+  if (memory?.holds(y)) return memory.dot(x, y);
   let a = 0;
   let b = 0;
   const n = x.length;
@@ -17,6 +24,8 @@ export function dot(x: Float64Array, y: Float64Array): number {
 export const norm = (x: Float64Array): number => Math.sqrt(dot(x, x));
 
 export function axpy(alpha: number, x: Float64Array, y: Float64Array): void {
+  const memory = KernelMemory.of(y);
+  if (memory?.holds(x)) return memory.combine([x], 1, [1], alpha, y);
   for (let i = 0; i < x.length; i++) y[i]! += alpha * x[i]!;
 }
 
@@ -31,6 +40,8 @@ export function project(
   w: Float64Array,
   h: Float64Array,
 ): void {
+  const memory = KernelMemory.of(w);
+  if (memory?.holdsAll(basis, count)) return memory.project(basis, count, w, h);
   const n = w.length;
   let c = 0;
   for (; c + 3 < count; c += 4) {
@@ -65,6 +76,8 @@ export function addCombination(
   factor: number,
   w: Float64Array,
 ): void {
+  const memory = KernelMemory.of(w);
+  if (memory?.holdsAll(basis, count)) return memory.combine(basis, count, h, factor, w);
   const n = w.length;
   let c = 0;
   for (; c + 3 < count; c += 4) {
@@ -81,6 +94,25 @@ export function addCombination(
   for (; c < count; c++) axpy(factor * h[c]!, basis[c]!, w);
 }
 
+/** basis_r ← Σ_j turn[r · count + j] basis_j for r < keep, in place. */
+export function rotate(
+  basis: readonly Float64Array[],
+  count: number,
+  keep: number,
+  turn: Float64Array,
+  supply: Supply,
+): void {
+  const memory = basis[0] ? KernelMemory.of(basis[0]) : null;
+  if (memory?.holdsAll(basis, count) && memory.rotate(basis, count, keep, turn)) return;
+  const turned = Array.from({ length: keep }, (_, r) => {
+    const x = supply.take();
+    addCombination(basis, count, turn.subarray(r * count, (r + 1) * count), 1, x);
+    return x;
+  });
+  turned.forEach((x, r) => basis[r]!.set(x));
+  supply.give(...turned);
+}
+
 /** Removes the part of w in the span of an orthonormal set, in two passes (classical Gram–Schmidt, twice is enough). */
 export function orthogonalise(w: Float64Array, basis: readonly Float64Array[]): void {
   const h = new Float64Array(basis.length);
@@ -90,11 +122,10 @@ export function orthogonalise(w: Float64Array, basis: readonly Float64Array[]): 
   }
 }
 
-/** A random unit vector in the complement of the given orthonormal set. */
-export function randomUnit(n: number, random: Random, basis: readonly Float64Array[]): Float64Array {
-  const x = new Float64Array(n);
+/** Fills x with a random unit vector in the complement of the given orthonormal set. */
+export function randomUnit(x: Float64Array, random: Random, basis: readonly Float64Array[]): Float64Array {
   for (;;) {
-    for (let i = 0; i < n; i++) x[i] = random.next() - 0.5;
+    for (let i = 0; i < x.length; i++) x[i] = random.next() - 0.5;
     const before = norm(x);
     orthogonalise(x, basis);
     const size = norm(x);

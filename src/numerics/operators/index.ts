@@ -1,1 +1,7 @@
-export { laplacianOperator, meanStrength, type LaplacianOperator, type Operator } from './laplacian';
+export {
+  laplacianOperator,
+  matrixBytes,
+  meanStrength,
+  type LaplacianOperator,
+  type Operator,
+} from './laplacian';

@@ -1,4 +1,5 @@
 import { blockRows, blockRows8 } from './block';
+import { KernelMemory, type KeptMatrix } from '../kernels';
 import { UnanswerableError, type LaplacianKind, type Network } from '../types';
 
 /** A symmetric operator on R^n. */
@@ -19,6 +20,8 @@ export interface LaplacianOperator extends Operator {
   readonly tau: number;
   /** d^{-1/2} ((d + τ)^{-1/2} when regularised; 0 on isolated members): maps u to D^{-1/2} u. All 1 for the combinatorial kind. */
   readonly scale: Float64Array;
+  /** A vector of zeros in the memory where products run fastest. */
+  vector(): Float64Array;
   /** out = α A x + β x + γ z in one pass; `out` may be the same array as `z`, not as `x`. */
   combine(
     x: Float64Array,
@@ -48,8 +51,14 @@ export function meanStrength(net: Network): number {
  * rank one (Amini, Chen, Bickel & Levina 2013; Zhang & Rohe 2018).
  *
  * @param tau only for `regularised`; mean strength by default; must be positive there
+ * @param memory where compiled kernels work; products of vectors that lie elsewhere take the plain path
  */
-export function laplacianOperator(net: Network, kind: LaplacianKind, tau?: number): LaplacianOperator {
+export function laplacianOperator(
+  net: Network,
+  kind: LaplacianKind,
+  tau?: number,
+  memory: KernelMemory | null = null,
+): LaplacianOperator {
   const { n, offsets, targets } = net;
   const t = kind === 'regularised' ? (tau ?? meanStrength(net)) : 0;
   if (kind === 'regularised' && !(t > 0 && Number.isFinite(t))) {
@@ -59,10 +68,16 @@ export function laplacianOperator(net: Network, kind: LaplacianKind, tau?: numbe
     );
   }
   const { diagonal, scale, values, norm } = coefficients(net, kind, t);
+  const kept = memory && keep(memory, net, diagonal, scale, values);
   const rankOne = kind === 'regularised' && n > 0 ? t / n : 0;
 
   const combine: LaplacianOperator['combine'] = (x, z, alpha, beta, gamma, out) => {
     let shift = 0;
+    if (kept && memory.holds(x, z, out)) {
+      if (rankOne !== 0) shift = alpha * rankOne * memory.dot(kept.scale, x);
+      memory.product(kept, x, z, { alpha, beta, gamma, shift }, out);
+      return;
+    }
     if (rankOne !== 0) {
       for (let i = 0; i < n; i++) shift += scale[i]! * x[i]!;
       shift *= alpha * rankOne;
@@ -100,12 +115,39 @@ export function laplacianOperator(net: Network, kind: LaplacianKind, tau?: numbe
     tau: t,
     norm,
     scale,
+    vector: () => memory?.take(n) ?? new Float64Array(n),
     combine,
     multiply: (x, out) => combine(x, x, 1, 0, 0, out),
     multiplyBlock,
     dense,
   };
 }
+
+/** Copies of the operator's arrays where the kernels work, or null where they do not fit. */
+function keep(
+  memory: KernelMemory,
+  net: Network,
+  diagonal: Float64Array,
+  scale: Float64Array,
+  values: Float64Array,
+): KeptMatrix | null {
+  const copy = (source: Float64Array): Float64Array => {
+    const own = memory.take(source.length);
+    own.set(source);
+    return own;
+  };
+  const offsets = memory.keepInts(net.offsets);
+  const targets = memory.keepInts(net.targets);
+  if (!offsets || !targets) return null;
+  const doubles = [copy(values), copy(diagonal), copy(scale)] as const;
+  if (!memory.holds(...doubles)) return null;
+  memory.balance(net.offsets);
+  return { offsets, targets, values: doubles[0], diagonal: doubles[1], scale: doubles[2] };
+}
+
+/** Bytes that the operator's own arrays take in a kernel memory. */
+export const matrixBytes = (net: Network): number =>
+  net.targets.length * 12 + (net.n + 1) * 4 + net.n * 16 + 5 * 64;
 
 /** The product itself, apart from any closure so that the engine keeps every array in a register. */
 function combineRows(

@@ -1,0 +1,1 @@
+export { KernelMemory, type KeptMatrix } from './memory';

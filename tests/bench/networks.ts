@@ -1,4 +1,11 @@
-import { buildNetwork, componentMembers, components, createRandom, subnetwork, type Network } from '@/numerics';
+import {
+  buildNetwork,
+  componentMembers,
+  components,
+  createRandom,
+  subnetwork,
+  type Network,
+} from '@/numerics';
 
 /**
  * A social network for timing: a degree-corrected block model (Karrer & Newman 2011) with groups of unequal size,

@@ -2,21 +2,25 @@ import type { LaplacianOperator } from '../operators';
 import { growthAt, type Filter } from './filter';
 
 /**
- * Degree of the filter: as high as makes products outweigh the orthogonalisation of one step, and high enough for some
- * growth on a small gap, but with an amplification of the lowest value of at most about e⁷, beyond which the higher
- * wanted vectors lose digits. Every further degree costs products, as a filter is a worse polynomial than Lanczos's own.
+ * Degree of the filter: high enough for the last wanted value to stand out of the unwanted ones, and for products to
+ * weigh as much as the orthogonalisation of one step; but with an amplification of the lowest value of at most
+ * about e¹⁰, beyond which the higher wanted vectors lose digits that the tolerance asks for.
+ *
+ * @param wanted an estimate of the last wanted value, below the cut
  */
 export function chooseDegree(
   op: LaplacianOperator,
   low: number,
+  wanted: number,
   cut: number,
   top: number,
   capacity: number,
 ): number {
-  const growth = growthAt(low, cut, top);
-  const byWork = Math.ceil(1 + capacity / (2 * (op.entriesPerRow + 2)));
-  const byGap = Math.ceil(1 / growth);
-  return Math.max(2, Math.min(Math.max(byWork, byGap), Math.ceil(7 / growth), 100));
+  // Bytes moved for one row: the basis twice, mostly three quarters full, against the matrix and its vectors.
+  const byWork = Math.ceil((12 * capacity) / (12 * op.entriesPerRow + 40));
+  const byGap = Math.ceil(1.2 / growthAt(Math.min(wanted, cut), cut, top));
+  const ceiling = Math.ceil(10 / growthAt(low, cut, top));
+  return Math.max(2, Math.min(Math.max(byWork, byGap), ceiling, 100));
 }
 
 /**

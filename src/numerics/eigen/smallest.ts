@@ -63,8 +63,12 @@ export function searchBytes(n: number, count: number): number {
   return vectors * (Math.ceil(n / 8) * 64) + 8 * (capacity * capacity + 2 * 1_024 * capacity);
 }
 
-/** Products after which a factorisation is tried: the gap is small, and on a thin network the inverse is cheap. */
+/**
+ * Products after which a factorisation is tried, where so many more are to be expected that the gap must be small:
+ * on a thin network the inverse is cheap, but on others the attempt costs dozens of products.
+ */
 const patience = 250;
+const slow = (count: number): number => 1_000 + 150 * count;
 
 const nothing: Pairs = { values: [], vectors: [], residuals: [] };
 
@@ -144,21 +148,30 @@ class Search {
       filter = this.firstFilter(krylov, count, capacity, outside);
     }
     const keep = Math.min(capacity - 2, count + Math.floor(0.4 * (capacity - count)));
-    let margin = 1;
+    // The estimates are on the low side; a step of Rayleigh–Ritz that fails costs more than a step of Lanczos.
+    let margin = 0.15;
     let gathered = 0;
     const before = this.products;
     for (;;) {
-      // The small eigenproblem of a check costs as much as some products once the basis is large.
-      const stride = Math.max(3, Math.floor(capacity / 8));
+      // The small eigenproblem of a check costs as much as some products, so it waits until it may tell something.
+      const stride = capacity < 50 ? 3 : Math.floor(capacity / 8);
+      let next = count + stride;
+      let checked: { size: number; share: number } | null = null;
       while (!krylov.full) {
         krylov.step(this.counted(filter));
         gathered += Math.log(2 * Math.max(1, filter.at(above ?? 0)));
         this.look(this.done);
-        if (krylov.size < count || (krylov.size % stride !== 0 && !krylov.full)) continue;
+        if (krylov.size < count || (krylov.size < next && !krylov.full)) continue;
         const ritz = krylov.ritz();
         const estimates = this.estimates(ritz, count, filter);
         const bar = this.options.tolerance * this.norm * margin;
-        this.done = Math.max(this.done, share(estimates, bar, this.norm));
+        const reached = share(estimates, bar, this.norm);
+        const rate = checked ? (reached - checked.share) / (krylov.size - checked.size) : 0;
+        next =
+          krylov.size +
+          Math.max(stride, above === null && rate > 0 ? Math.floor((0.8 * (1 - reached)) / rate) : 0);
+        checked = { size: krylov.size, share: reached };
+        this.done = Math.max(this.done, reached);
         if (above !== null && gathered > 0.5 * Math.log(op.n) + 6) {
           const bar = filter.at(above);
           const surely = ritz.values[0]! + ritz.residuals[0]! < bar;
@@ -181,19 +194,24 @@ class Search {
         margin = (0.7 * Math.max(...estimates)) / worst;
         if (!(margin > 1e-12)) throw this.failure(worst);
       }
-      if (this.inverse === undefined && this.products > patience) {
+      const expected = this.products / Math.max(this.done, 1e-3);
+      if (this.inverse === undefined && this.products > patience && expected > slow(count)) {
         this.inverse = shiftedInverse(op);
         if (this.inverse) return this.byInverse(this.inverse, count, outside, above);
       }
       const ritz = krylov.ritz();
-      const cut = nextCut(filter, ritz.values, count, keep);
+      // Wanted values within the unwanted interval are not seen at all: the interval began too low.
+      const cut =
+        ritz.values[count - 1]! > 1 || filter.cut >= 0.9 * this.top
+          ? nextCut(filter, ritz.values, count, keep)
+          : Math.min(0.9 * this.top, 1.6 * filter.cut);
       if (cut === null) {
         krylov.restart(keep, ritz);
       } else {
         const start = this.mixture(krylov, ritz, Math.min(keep, count + 2), outside);
         filter = this.makeFilter(
           filter.inverse(ritz.values[0]!),
-          filter.inverse(ritz.values[count - 1]!),
+          Math.min(cut, filter.inverse(ritz.values[count - 1]!)),
           cut,
           capacity,
         );
@@ -257,8 +275,9 @@ class Search {
     const ritz = krylov.ritz();
     const last = ritz.values.length - 1;
     const low = -ritz.values[0]!;
-    const wanted = -ritz.values[Math.min(last, count - 1)]!;
-    const cut = -ritz.values[Math.min(last, count + Math.floor(0.2 * (last - count)))]!;
+    const wanted = this.valueAtRank(ritz, count);
+    // Below the first few Ritz values nothing is known of the density.
+    const cut = Math.max(this.valueAtRank(ritz, 2 * count + 6), -ritz.values[Math.min(last, 3)]!);
     const start = this.mixture(krylov, ritz, Math.min(last, count + 2), outside);
     this.restartFrom(krylov, start);
     return this.makeFilter(low, wanted, cut, capacity);
@@ -269,6 +288,30 @@ class Search {
     this.supply.give(start);
   }
 
+  /**
+   * The λ below which `rank` eigenvalues are to be expected: from the Lanczos quadrature of the spectral density with
+   * one random vector (Golub & Meurant 1994; Lin, Saad & Yang 2016), half of each node's weight on either side of it.
+   */
+  private valueAtRank(ritz: { values: Float64Array; rows: Float64Array }, rank: number): number {
+    const m = ritz.values.length;
+    const aim = rank / this.op.n;
+    let below = 0;
+    for (let r = 0; r < m; r++) {
+      const weight = ritz.rows[r * m]! ** 2;
+      const here = below + weight / 2;
+      const value = -ritz.values[r]!;
+      if (here >= aim) {
+        if (r === 0) return value;
+        const before = -ritz.values[r - 1]!;
+        const weightBefore = ritz.rows[(r - 1) * m]! ** 2;
+        const there = below - weightBefore / 2;
+        return before + ((aim - there) / (here - there)) * (value - before);
+      }
+      below += weight;
+    }
+    return -ritz.values[m - 1]!;
+  }
+
   private makeFilter(low: number, wanted: number, cut: number, capacity: number): Filter {
     const a = Math.min(0.9 * this.top, Math.max(cut, wanted + 0.1 * (wanted - low), 1e-12 * this.top));
     return chebyshevFilter(
@@ -276,7 +319,7 @@ class Search {
       a,
       this.top,
       low,
-      chooseDegree(this.op, low, a, this.top, capacity),
+      chooseDegree(this.op, low, Math.min(wanted, 0.9 * a + 0.1 * low), a, this.top, capacity),
       this.spare,
     );
   }

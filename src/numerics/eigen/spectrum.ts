@@ -90,7 +90,7 @@ function solvePart(op: LaplacianOperator, count: number, options: SpectrumOption
   const memory = new KernelMemory(n, bytes, op.network.targets.length);
   let found: SmallestPairs;
   try {
-    found = smallestEigenpairs(laplacianOperator(op.network, op.kind, op.tau, memory), search, watch);
+    found = smallestEigenpairs(op.within(memory), search, watch);
   } finally {
     memory.close();
   }

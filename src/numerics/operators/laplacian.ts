@@ -22,6 +22,8 @@ export interface LaplacianOperator extends Operator {
   readonly scale: Float64Array;
   /** A vector of zeros in the memory where products run fastest. */
   vector(): Float64Array;
+  /** The same operator with its arrays copied to where compiled kernels work; vectors that lie elsewhere take the plain path. */
+  within(memory: KernelMemory): LaplacianOperator;
   /** out = α A x + β x + γ z in one pass; `out` may be the same array as `z`, not as `x`. */
   combine(
     x: Float64Array,
@@ -51,15 +53,8 @@ export function meanStrength(net: Network): number {
  * rank one (Amini, Chen, Bickel & Levina 2013; Zhang & Rohe 2018).
  *
  * @param tau only for `regularised`; mean strength by default; must be positive there
- * @param memory where compiled kernels work; products of vectors that lie elsewhere take the plain path
  */
-export function laplacianOperator(
-  net: Network,
-  kind: LaplacianKind,
-  tau?: number,
-  memory: KernelMemory | null = null,
-): LaplacianOperator {
-  const { n, offsets, targets } = net;
+export function laplacianOperator(net: Network, kind: LaplacianKind, tau?: number): LaplacianOperator {
   const t = kind === 'regularised' ? (tau ?? meanStrength(net)) : 0;
   if (kind === 'regularised' && !(t > 0 && Number.isFinite(t))) {
     throw new UnanswerableError(
@@ -67,8 +62,19 @@ export function laplacianOperator(
       'The regularised Laplacian needs τ > 0; a network without ties has no mean strength to take it from.',
     );
   }
-  const { diagonal, scale, values, norm } = coefficients(net, kind, t);
-  const kept = memory && keep(memory, net, diagonal, scale, values);
+  return operatorOf(net, kind, t, coefficients(net, kind, t), null);
+}
+
+function operatorOf(
+  net: Network,
+  kind: LaplacianKind,
+  t: number,
+  parts: Coefficients,
+  memory: KernelMemory | null,
+): LaplacianOperator {
+  const { n, offsets, targets } = net;
+  const { diagonal, scale, values, norm } = parts;
+  const kept = memory && keep(memory, net, parts);
   const rankOne = kind === 'regularised' && n > 0 ? t / n : 0;
 
   const combine: LaplacianOperator['combine'] = (x, z, alpha, beta, gamma, out) => {
@@ -116,6 +122,7 @@ export function laplacianOperator(
     norm,
     scale,
     vector: () => memory?.take(n) ?? new Float64Array(n),
+    within: (other) => operatorOf(net, kind, t, parts, other),
     combine,
     multiply: (x, out) => combine(x, x, 1, 0, 0, out),
     multiplyBlock,
@@ -127,9 +134,7 @@ export function laplacianOperator(
 function keep(
   memory: KernelMemory,
   net: Network,
-  diagonal: Float64Array,
-  scale: Float64Array,
-  values: Float64Array,
+  { diagonal, scale, values }: Coefficients,
 ): KeptMatrix | null {
   const copy = (source: Float64Array): Float64Array => {
     const own = memory.take(source.length);
@@ -174,7 +179,14 @@ function combineRows(
 }
 
 /** Diagonal, D^{-1/2}, off-diagonal values (positive; they are subtracted) and a norm bound. */
-function coefficients(net: Network, kind: LaplacianKind, tau: number) {
+interface Coefficients {
+  readonly diagonal: Float64Array;
+  readonly scale: Float64Array;
+  readonly values: Float64Array;
+  readonly norm: number;
+}
+
+function coefficients(net: Network, kind: LaplacianKind, tau: number): Coefficients {
   const { n, offsets, targets, weights, strength } = net;
   const diagonal = new Float64Array(n);
   const scale = new Float64Array(n).fill(1);

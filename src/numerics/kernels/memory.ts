@@ -190,6 +190,65 @@ export class KernelMemory {
     ]);
   }
 
+  /**
+   * out = (diag(own) + α S) x for eight vectors side by side, S the matrix less its rank-one part `rankOne` scale scaleᵀ;
+   * dots_v = xᵀ out.
+   */
+  shifted8(
+    matrix: KeptMatrix,
+    own: Float64Array,
+    alpha: number,
+    rankOne: number,
+    x: Float64Array,
+    out: Float64Array,
+    dots: Float64Array,
+  ): void {
+    if (rankOne !== 0) {
+      const args = [matrix.scale.byteOffset, x.byteOffset];
+      this.both('weigh8', [...args, this.sumsAt(0)], [...args, this.sumsAt(1)]);
+    }
+    for (let v = 0; v < 8; v++) this.slots[v] = rankOne === 0 ? 0 : rankOne * this.sum(v);
+    const args = [
+      matrix.offsets.byteOffset,
+      matrix.targets.byteOffset,
+      matrix.values.byteOffset,
+      matrix.diagonal.byteOffset,
+      matrix.scale.byteOffset,
+      own.byteOffset,
+      x.byteOffset,
+      alpha,
+      this.slots.byteOffset,
+      out.byteOffset,
+    ];
+    this.both('rows8', [...args, this.sumsAt(0)], [...args, this.sumsAt(1)]);
+    for (let v = 0; v < 8; v++) dots[v] = this.sum(v);
+  }
+
+  /** See `advance8` in the kernels' source. */
+  advance8(
+    step: Float64Array,
+    inverse: Float64Array,
+    p: Float64Array,
+    q: Float64Array,
+    x: Float64Array,
+    r: Float64Array,
+    sums: Float64Array,
+  ): void {
+    this.slots.set(step);
+    const args = [this.slots, inverse, p, q, x, r].map((one) => one.byteOffset);
+    this.both('advance8', [...args, this.sumsAt(0)], [...args, this.sumsAt(1)]);
+    for (let v = 0; v < 16; v++) sums[v] = this.sum(v);
+  }
+
+  /** See `direct8` in the kernels' source. */
+  direct8(factor: Float64Array, inverse: Float64Array, r: Float64Array, p: Float64Array): void {
+    this.slots.set(factor);
+    this.both(
+      'direct8',
+      [this.slots, inverse, r, p].map((one) => one.byteOffset),
+    );
+  }
+
   /** Ends the second thread. */
   close(): void {
     this.second?.end();

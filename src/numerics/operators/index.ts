@@ -5,3 +5,4 @@ export {
   type LaplacianOperator,
   type Operator,
 } from './laplacian';
+export { advance8, direct8, WIDTH } from './eight';

@@ -1,4 +1,5 @@
 import { blockRows, blockRows8 } from './block';
+import { WIDTH } from './eight';
 import { KernelMemory, type KeptMatrix } from '../kernels';
 import { UnanswerableError, type LaplacianKind, type Network } from '../types';
 
@@ -33,6 +34,10 @@ export interface LaplacianOperator extends Operator {
     gamma: number,
     out: Float64Array,
   ): void;
+  /** The matrix's own diagonal, the rank-one part included. */
+  readonly diagonal: Float64Array;
+  /** out = (diag(own) + α A) x for eight vectors side by side (x[8 i + v]), and dots_v = xᵀ out of each. */
+  shifted8(own: Float64Array, alpha: number, x: Float64Array, out: Float64Array, dots: Float64Array): void;
   /** Row sums of A x for `width` vectors stored interleaved (x[i · width + v]); same layout out. */
   multiplyBlock(x: Float64Array, width: number, out: Float64Array): void;
   /** The matrix as n × n row-major, for small networks. */
@@ -103,6 +108,22 @@ function operatorOf(
     for (let i = 0, q = 0; i < n; i++) for (let v = 0; v < width; v++, q++) out[q]! -= shift[v]! * scale[i]!;
   };
 
+  const shifted8: LaplacianOperator['shifted8'] = (own, alpha, x, out, dots) => {
+    if (kept && memory.holds(own, x, out)) {
+      memory.shifted8(kept, own, alpha, alpha * rankOne, x, out, dots);
+      return;
+    }
+    multiplyBlock(x, WIDTH, out);
+    dots.fill(0);
+    for (let i = 0, at = 0; i < n; i++) {
+      for (let v = 0; v < WIDTH; v++, at++) {
+        const value = own[i]! * x[at]! + alpha * out[at]!;
+        out[at] = value;
+        dots[v]! += x[at]! * value;
+      }
+    }
+  };
+
   const dense = (): Float64Array => {
     const a = new Float64Array(n * n);
     for (let i = 0; i < n; i++) {
@@ -126,6 +147,8 @@ function operatorOf(
     combine,
     multiply: (x, out) => combine(x, x, 1, 0, 0, out),
     multiplyBlock,
+    shifted8,
+    diagonal: rankOne === 0 ? diagonal : diagonal.map((one, i) => one - rankOne * scale[i]! ** 2),
     dense,
   };
 }

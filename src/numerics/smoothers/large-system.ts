@@ -1,6 +1,7 @@
 import { components } from '../network';
+import { WIDTH } from '../operators';
 import { createRandom } from '../random';
-import { solveShifted } from '../solvers';
+import type { ShiftedSystems } from '../solvers';
 import type { Watch } from '../types';
 import { groupColumns, type Fit, type Problem } from './model';
 import { pseudoInverse, quadraticForm, times, type PseudoInverse } from './small-matrix';
@@ -29,7 +30,6 @@ interface Solved {
 export class LargeSystem {
   private readonly weights: Float64Array;
   private readonly columns: Float64Array[];
-  private readonly diagonal: Float64Array;
   private readonly probes: Float64Array[];
   private readonly starts = new Map<string, Float64Array>();
 
@@ -37,49 +37,44 @@ export class LargeSystem {
     private readonly problem: Problem,
     zeroed: Uint8Array,
     private readonly seed: number,
+    private readonly systems: ShiftedSystems,
     private readonly watch?: Watch,
   ) {
     this.weights = Float64Array.from(problem.s, (s, i) => (zeroed[i] === 1 ? 0 : s));
     this.columns = groupColumns(problem.groups, this.weights);
-    this.diagonal = diagonalOf(problem);
     const random = createRandom(seed ^ PROBE_STREAM);
     this.probes = Array.from({ length: PROBES }, () =>
       Float64Array.from({ length: problem.l.n }, () => (random.next() < 0.5 ? -1 : 1)),
     );
   }
 
+  /** A⁻¹ b of several; each starts from the solution that last bore its name. */
   private solve(
-    name: string,
-    b: Float64Array,
+    names: readonly string[],
+    right: readonly Float64Array[],
     alpha: number,
     tolerance: number,
-  ): { x: Float64Array; residual: number } {
-    const start = this.starts.get(name);
-    const result = solveShifted(
-      this.problem.l,
-      this.weights,
-      alpha,
-      this.diagonal,
-      b,
-      { tolerance, ...(start ? { start } : {}) },
-      this.watch,
-    );
-    this.starts.set(name, result.x);
-    return result;
+  ): { solutions: Float64Array[]; residual: number } {
+    const starts = names.map((name) => this.starts.get(name));
+    const results = this.systems.solve(this.weights, alpha, right, { tolerance, starts }, this.watch);
+    results.forEach(({ x }, k) => this.starts.set(names[k]!, x));
+    return {
+      solutions: results.map(({ x }) => x),
+      residual: results.reduce((most, { residual }) => Math.max(most, residual), 0),
+    };
   }
 
   private solved(alpha: number, tolerance: number): Solved {
     const { y } = this.problem;
     const w = this.weights;
     const weigh = (v: Float64Array): Float64Array => v.map((one, i) => one * w[i]!);
-    let residual = 0;
-    const smooth = (name: string, v: Float64Array): Float64Array => {
-      const { x, residual: r } = this.solve(name, weigh(v), alpha, tolerance);
-      residual = Math.max(residual, r);
-      return x;
-    };
-    const fy = smooth('y', y);
-    const fx = this.columns.map((column, j) => smooth(`x${j}`, column));
+    const { solutions, residual } = this.solve(
+      ['y', ...this.columns.map((_, j) => `x${j}`)],
+      [y, ...this.columns].map(weigh),
+      alpha,
+      tolerance,
+    );
+    const [fy, ...fx] = solutions as [Float64Array, ...Float64Array[]];
     const g = fx.length;
     // aᵀ P b with P = W − W A⁻¹ W.
     const product = (a: Float64Array, b: Float64Array, fb: Float64Array): number => {
@@ -143,16 +138,18 @@ export class LargeSystem {
       if (size > 0) sum += inside / size;
       return column.map((one, i) => (size > 0 ? (root[i]! * one) / Math.sqrt(size) : 0));
     });
-    let rest = 0;
-    this.probes.forEach((probe, k) => {
+    const right = this.probes.map((probe) => {
       const z = Float64Array.from(probe);
       for (const q of directions) {
         const along = q.reduce((total, one, i) => total + one * probe[i]!, 0);
         for (let i = 0; i < z.length; i++) z[i]! -= along * q[i]!;
       }
-      const b = z.map((one, i) => one * root[i]!);
-      const { x } = this.solve(`p${k}`, b, alpha, tolerance);
-      for (let i = 0; i < b.length; i++) rest += b[i]! * x[i]!;
+      return z.map((one, i) => one * root[i]!);
+    });
+    const names = right.map((_, k) => `p${k}`);
+    let rest = 0;
+    this.solve(names, right, alpha, tolerance).solutions.forEach((x, k) => {
+      for (let i = 0; i < x.length; i++) rest += right[k]![i]! * x[i]!;
     });
     return sum + rest / this.probes.length;
   }
@@ -196,7 +193,7 @@ export class LargeSystem {
   private inverseDiagonal(alpha: number, probes: number): Float64Array {
     const { l } = this.problem;
     const n = l.n;
-    const scale = this.diagonal.map((d, i) => 1 / Math.sqrt(this.weights[i]! + alpha * d));
+    const scale = l.diagonal.map((d, i) => 1 / Math.sqrt(this.weights[i]! + alpha * d));
     const squares = this.neighbourSquares(alpha, scale);
     const random = createRandom(this.seed ^ DIAGONAL_STREAM);
     const estimate = new Float64Array(n);
@@ -207,22 +204,20 @@ export class LargeSystem {
       l.multiply(inside, out);
       return v.map((one, i) => one - scale[i]! * (this.weights[i]! * inside[i]! + alpha * out[i]!));
     };
-    for (let k = 0; k < probes; k++) {
+    for (let k = 0; k < probes; k += WIDTH) {
       this.watch?.progress?.(0.7 + (0.2 * k) / probes, 'Weighing each member’s own score');
-      const z = Float64Array.from({ length: n }, () => (random.next() < 0.5 ? -1 : 1));
-      const { x } = solveShifted(
-        l,
-        this.weights,
-        alpha,
-        this.diagonal,
-        z.map((one, i) => one / scale[i]!),
-        { tolerance: 1e-5 },
-        this.watch,
+      const signs = Array.from({ length: Math.min(WIDTH, probes - k) }, () =>
+        Float64Array.from({ length: n }, () => (random.next() < 0.5 ? -1 : 1)),
       );
-      const n1 = times1(z);
-      const n2 = times1(n1);
-      for (let i = 0; i < n; i++)
-        estimate[i]! += (z[i]! * (x[i]! / scale[i]! - z[i]! - n1[i]! - n2[i]!)) / probes;
+      const right = signs.map((z) => z.map((one, i) => one / scale[i]!));
+      const solved = this.systems.solve(this.weights, alpha, right, { tolerance: 1e-5 }, this.watch);
+      signs.forEach((z, v) => {
+        const { x } = solved[v]!;
+        const n1 = times1(z);
+        const n2 = times1(n1);
+        for (let i = 0; i < n; i++)
+          estimate[i]! += (z[i]! * (x[i]! / scale[i]! - z[i]! - n1[i]! - n2[i]!)) / probes;
+      });
     }
     // All terms of the series have a non-negative diagonal, so the closed part is a lower bound.
     return estimate.map((rest, i) => scale[i]! ** 2 * (1 + squares[i]! + Math.max(0, rest)));
@@ -244,21 +239,20 @@ export class LargeSystem {
 
   /** Exact [A⁻¹]_ii of some members, by solving. */
   exactDiagonal(alpha: number, members: readonly number[]): Float64Array {
-    return Float64Array.from(members, (i, at) => {
-      if (at % 8 === 0)
-        this.watch?.progress?.(0.9 + (0.08 * at) / members.length, 'Checking members near the line exactly');
-      const b = new Float64Array(this.problem.l.n);
-      b[i] = 1;
-      return solveShifted(
-        this.problem.l,
-        this.weights,
-        alpha,
-        this.diagonal,
-        b,
-        { tolerance: 1e-8 },
-        this.watch,
-      ).x[i]!;
-    });
+    const own = new Float64Array(members.length);
+    for (let from = 0; from < members.length; from += WIDTH) {
+      this.watch?.progress?.(0.9 + (0.08 * from) / members.length, 'Checking members near the line exactly');
+      const group = members.slice(from, from + WIDTH);
+      const right = group.map((i) => {
+        const b = new Float64Array(this.problem.l.n);
+        b[i] = 1;
+        return b;
+      });
+      this.systems
+        .solve(this.weights, alpha, right, { tolerance: 1e-8 }, this.watch)
+        .forEach(({ x }, v) => (own[from + v] = x[group[v]!]!));
+    }
+    return own;
   }
 
   /** @param rough fewer probes and a looser solve, for the rounds that only look for wild scores */
@@ -294,15 +288,4 @@ export class LargeSystem {
       },
     };
   }
-}
-
-/** Diagonal of the chosen Laplacian. */
-function diagonalOf({ l }: Problem): Float64Array {
-  const { network, kind, tau, n } = l;
-  return Float64Array.from({ length: n }, (_, i) => {
-    const d = network.strength[i]!;
-    if (kind === 'combinatorial') return d;
-    if (kind === 'normalised') return d > 0 ? 1 : 0;
-    return 1 - tau / n / (d + tau);
-  });
 }

@@ -1,3 +1,4 @@
+import { ShiftedSystems } from '../solvers';
 import { median } from '../statistics';
 import type { LaplacianKind, Watch } from '../types';
 import { UnanswerableError } from '../types';
@@ -156,6 +157,22 @@ function smoothLarge(
   seed: number,
   watch?: Watch,
 ): Smoothing {
+  const systems = new ShiftedSystems(problem.l);
+  try {
+    return smoothBySolving(problem, strength, robust, seed, systems, watch);
+  } finally {
+    systems.close();
+  }
+}
+
+function smoothBySolving(
+  problem: Problem,
+  strength: Strength,
+  robust: boolean,
+  seed: number,
+  systems: ShiftedSystems,
+  watch?: Watch,
+): Smoothing {
   const [low, high] =
     strength.kind === 'restricted-likelihood' ? [-1.5, 4] : rangeFor(problem.l.kind, strength.kind);
   let zeroed: Uint8Array = new Uint8Array(problem.l.n);
@@ -176,18 +193,19 @@ function smoothLarge(
     else end = found.end ?? end;
     return found.alpha;
   };
-  let alpha = choose(new LargeSystem(problem, zeroed, seed, watch));
+  let alpha = choose(new LargeSystem(problem, zeroed, seed, systems, watch));
   for (let round = 0; robust && round < ROUNDS; round++) {
     watch?.progress?.(0.5 + 0.05 * round, 'Setting wild scores aside');
-    const fit = new LargeSystem(problem, zeroed, seed, watch).fit(alpha, true);
+    const fit = new LargeSystem(problem, zeroed, seed, systems, watch).fit(alpha, true);
     const next = wild(standardise(problem, fit, zeroed).z, problem.observed);
     const same = next.every((one, i) => one === zeroed[i]);
     zeroed = next;
     // The strength moves most when the wild scores first go.
-    if (round === 0) alpha = choose(new LargeSystem(problem, zeroed, seed, watch), Math.log10(alpha));
+    if (round === 0)
+      alpha = choose(new LargeSystem(problem, zeroed, seed, systems, watch), Math.log10(alpha));
     if (same) break;
   }
-  const fit = new LargeSystem(problem, zeroed, seed, watch).fit(alpha);
+  const fit = new LargeSystem(problem, zeroed, seed, systems, watch).fit(alpha);
   const first = standardise(problem, fit, zeroed);
   const near = Array.from(first.z.keys())
     .filter((i) => Math.abs(first.z[i]!) > 2.2)

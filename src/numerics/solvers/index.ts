@@ -1,2 +1,2 @@
 export { cholesky, choleskySolve } from './cholesky';
-export { solveShifted, type SolveResult } from './conjugate-gradient';
+export { ShiftedSystems, type SolveOptions, type SolveResult } from './shifted-systems';

@@ -10,6 +10,7 @@ import {
 } from '@/numerics';
 import { exactBasis } from '@/numerics/smoothers/exact-basis';
 import { ExactSystem } from '@/numerics/smoothers/exact-system';
+import { ShiftedSystems } from '@/numerics/solvers';
 import { LargeSystem } from '@/numerics/smoothers/large-system';
 import type { Problem } from '@/numerics/smoothers';
 import { plant } from './planted';
@@ -75,7 +76,7 @@ test('a member of weight 0 is predicted as if the score were missing', () => {
 
 test('the path for large networks agrees with the exact one', () => {
   const exact = new ExactSystem(problem, exactBasis(problem), none);
-  const large = new LargeSystem(problem, none, 1);
+  const large = new LargeSystem(problem, none, 1, new ShiftedSystems(problem.l));
   const [a, b] = [exact.fit(2), large.fit(2)];
   b.refine([...problem.observed.keys()]);
   a.smoothed.forEach((one, i) => expect(b.smoothed[i]).toBeCloseTo(one, 7));

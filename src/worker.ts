@@ -18,6 +18,11 @@ const end = async (code: number): Promise<void> => {
 };
 process.on('SIGINT', () => void end(0));
 process.on('SIGTERM', () => void end(0));
+// The queue's own connections fail outside any job while the database is away: say so, end, and start afresh.
+process.on('uncaughtException', (err) => {
+  log.error({ err: err.message }, 'worker stopped; jobs go on when it is started again');
+  void end(1);
+});
 // The queue gave up, as when the database stays away: end, and let the supervisor start afresh.
 worker.done.then(
   () => void end(ending ? 0 : 1),

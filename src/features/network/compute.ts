@@ -121,7 +121,11 @@ export function computeShape(input: ShapeInput, watch: Watch): Shape {
   const network = buildNetwork(input.n, input.sources, input.targets, input.weights);
   const parts = components(network);
   watch.progress?.(0.1, 'Finding the shape');
-  const layout = spectralLayout(network, { seed: 1 }, watch);
+  const layout = spectralLayout(
+    network,
+    { seed: 1 },
+    { ...watch, progress: (done, step) => watch.progress?.(0.1 + 0.3 * done, step) },
+  );
   const x = Float64Array.from(layout.x);
   const y = Float64Array.from(layout.y);
   if (parts.largest >= 0) settle(network, componentMembers(parts)[parts.largest]!, x, y, watch);

@@ -45,6 +45,7 @@ export class SecondThread {
     const control = new SharedArrayBuffer(16 + 8 * MOST_ARGUMENTS);
     const worker = new Worker(source, {
       eval: true,
+      execArgv: [],
       workerData: { module: kernelModule(), memory, control, names: kernelNames },
     });
     // It must not keep a process alive that has nothing else to do.

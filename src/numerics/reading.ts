@@ -16,7 +16,7 @@ import { UnanswerableError, type LaplacianKind, type Network, type Watch } from 
 
 export type ReadingFilter =
   | { readonly kind: 'two-level' }
-  | { readonly kind: 'tikhonov'; readonly alpha: number | 'gcv' }
+  | { readonly kind: 'tikhonov'; readonly alpha: number | 'gcv' | 'hold-out' }
   | ChosenFilter;
 
 export interface ReadingInput {
@@ -128,8 +128,8 @@ function smoothMembers(
   };
   const strength: Strength = twoLevel
     ? { kind: 'restricted-likelihood' }
-    : filter.alpha === 'gcv'
-      ? { kind: 'gcv' }
+    : typeof filter.alpha === 'string'
+      ? { kind: filter.alpha }
       : { kind: 'given', alpha: filter.alpha };
   const fit = smooth(problem, strength, twoLevel, input.seed, watch);
   const spread = (of: Float64Array): Float64Array => {

@@ -2,6 +2,7 @@ import { components } from '../network';
 import { createRandom } from '../random';
 import { solveShifted } from '../solvers';
 import type { Watch } from '../types';
+import { diagonalOf } from './diagonal';
 import { groupColumns, type Fit, type Problem } from './model';
 import { pseudoInverse, quadraticForm, times, type PseudoInverse } from './small-matrix';
 
@@ -294,15 +295,4 @@ export class LargeSystem {
       },
     };
   }
-}
-
-/** Diagonal of the chosen Laplacian. */
-function diagonalOf({ l }: Problem): Float64Array {
-  const { network, kind, tau, n } = l;
-  return Float64Array.from({ length: n }, (_, i) => {
-    const d = network.strength[i]!;
-    if (kind === 'combinatorial') return d;
-    if (kind === 'normalised') return d > 0 ? 1 : 0;
-    return 1 - tau / n / (d + tau);
-  });
 }

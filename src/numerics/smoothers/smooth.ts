@@ -3,6 +3,7 @@ import type { LaplacianKind, Watch } from '../types';
 import { UnanswerableError } from '../types';
 import { exactBasis } from './exact-basis';
 import { ExactSystem } from './exact-system';
+import { HoldOut } from './hold-out';
 import { LargeSystem } from './large-system';
 import type { Fit, Problem } from './model';
 import { searchStrength } from './search';
@@ -18,6 +19,8 @@ const REFINED = 120;
 export type Strength =
   | { readonly kind: 'given'; readonly alpha: number }
   | { readonly kind: 'gcv' }
+  /** Ten seeded folds of left-out scores; only for a smoother without levels. */
+  | { readonly kind: 'hold-out' }
   | { readonly kind: 'restricted-likelihood' };
 
 export interface Smoothing extends Fit {
@@ -67,7 +70,7 @@ function wild(z: Float64Array, observed: Uint8Array): Uint8Array {
 }
 
 const rangeFor = (kind: LaplacianKind, strength: Strength['kind']): [number, number] =>
-  strength === 'gcv' && kind === 'combinatorial' ? [-4, 4] : [-3, 5];
+  (strength === 'gcv' || strength === 'hold-out') && kind === 'combinatorial' ? [-4, 4] : [-3, 5];
 
 /**
  * Boundary-avoiding penalty on −2 log restricted likelihood, after Chung, Rabe-Hesketh, Dorie, Gelman & Liu 2013, here
@@ -86,8 +89,8 @@ const NOTES = {
 } as const;
 
 /**
- * Smooths one attribute: strength given, by generalised cross-validation, or by restricted maximum likelihood with
- * robust rounds (numerics.md, "Readings").
+ * Smooths one attribute: strength given, by generalised cross-validation, by ten-fold hold-out (the strength to a few
+ * per cent), or by restricted maximum likelihood with robust rounds (numerics.md, "Readings").
  * @throws UnanswerableError with fewer than three observed members
  */
 export function smooth(
@@ -104,11 +107,17 @@ export function smooth(
       `Only ${observed} members have a value; at least 3 are needed.`,
     );
   return problem.l.n <= EXACT_UP_TO
-    ? smoothExactly(problem, strength, robust, watch)
+    ? smoothExactly(problem, strength, robust, seed, watch)
     : smoothLarge(problem, strength, robust, seed, watch);
 }
 
-function smoothExactly(problem: Problem, strength: Strength, robust: boolean, watch?: Watch): Smoothing {
+function smoothExactly(
+  problem: Problem,
+  strength: Strength,
+  robust: boolean,
+  seed: number,
+  watch?: Watch,
+): Smoothing {
   const basis = exactBasis(
     problem,
     watch && { ...watch, progress: (done, step) => watch.progress?.(0.7 * done, step) },
@@ -118,6 +127,12 @@ function smoothExactly(problem: Problem, strength: Strength, robust: boolean, wa
   let end: 'low' | 'high' | null = null;
   const choose = (system: ExactSystem): number => {
     if (strength.kind === 'given') return strength.alpha;
+    if (strength.kind === 'hold-out') {
+      const folds = new HoldOut(problem, seed, watch);
+      const found = searchStrength((alpha) => folds.error(alpha), low, high, 1e-2);
+      end = found.end;
+      return found.alpha;
+    }
     const found = searchStrength(
       (alpha) =>
         strength.kind === 'gcv' ? system.crossValidation(alpha) : system.criterion(alpha) + boundary(alpha),
@@ -162,8 +177,10 @@ function smoothLarge(
   let end: 'low' | 'high' | null = null;
   const choose = (system: LargeSystem, near?: number): number => {
     if (strength.kind === 'given') return strength.alpha;
-    const found =
-      strength.kind === 'gcv'
+    const folds = strength.kind === 'hold-out' ? new HoldOut(problem, seed, watch) : null;
+    const found: Found = folds
+      ? searchStrength((alpha) => folds.error(alpha), low, high, 0.05)
+      : strength.kind === 'gcv'
         ? coarseMinimum((alpha) => system.crossValidation(alpha), low, high, watch)
         : rootOf(
             (alpha) => system.score(alpha),

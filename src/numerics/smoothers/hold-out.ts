@@ -1,0 +1,102 @@
+import { components } from '../network';
+import { createRandom } from '../random';
+import { solveShifted } from '../solvers';
+import { UnanswerableError, type Watch } from '../types';
+import { diagonalOf } from './diagonal';
+import type { Problem } from './model';
+
+/** Folds of the hold-out; fewer where fewer members are observed. */
+export const FOLDS = 10;
+/** A stream of its own, so that folds do not repeat draws that made the data. */
+const FOLD_STREAM = 0x3c6ef372;
+
+/**
+ * Seeded folds of the observed members, as equal in size as can be.
+ * @param observed length n, 1 where observed
+ * @returns length n: 0…folds − 1, −1 where not observed
+ */
+export function foldsOf(observed: Uint8Array, folds: number, seed: number): Int32Array {
+  const members = Int32Array.from(observed.keys()).filter((i) => observed[i] === 1);
+  const out = new Int32Array(observed.length).fill(-1);
+  createRandom(seed ^ FOLD_STREAM)
+    .shuffle(members)
+    .forEach((i, at) => (out[i] = at % folds));
+  return out;
+}
+
+/**
+ * Hold-out criterion of the Tikhonov filter without levels (Stone 1974; ten folds after Breiman & Spector 1992): each
+ * fold is predicted by (S₋ + αL) ŷ = S₋ y with its weights set to 0, and the criterion is the mean of s_i (y_i − ŷ_i)²
+ * over the members that can be predicted: those in a component with an observed member outside their fold. With ten
+ * observed members or fewer it leaves out one at a time. Where groups have levels of their own it smooths less than
+ * generalised cross-validation, as leaving out one does (planted communities of 200, ten seeds: 1.2 times its error).
+ */
+export class HoldOut {
+  private readonly fold: Int32Array;
+  private readonly folds: number;
+  private readonly predictable: Uint8Array;
+  private readonly count: number;
+  private readonly diagonal: Float64Array;
+  private readonly starts: Float64Array[] = [];
+
+  /** @throws UnanswerableError `too-few-observed` when no member can be predicted from others */
+  constructor(
+    private readonly problem: Problem,
+    seed: number,
+    private readonly watch?: Watch,
+  ) {
+    const { observed } = problem;
+    this.folds = Math.min(
+      FOLDS,
+      observed.reduce((sum, one) => sum + one, 0),
+    );
+    this.fold = foldsOf(observed, this.folds, seed);
+    this.predictable = predictableOf(problem, this.fold);
+    this.count = this.predictable.reduce((sum, one) => sum + one, 0);
+    if (this.count === 0)
+      throw new UnanswerableError(
+        'too-few-observed',
+        'No member with a value is connected to another one with a value, so no strength can be tried on left-out scores.',
+      );
+    this.diagonal = diagonalOf(problem);
+  }
+
+  /** The criterion at strength α > 0, from solves to 1e-8; α close to the last one is fastest. */
+  error(alpha: number): number {
+    const { l, s, y } = this.problem;
+    let total = 0;
+    for (let fold = 0; fold < this.folds; fold++) {
+      const weights = s.map((one, i) => (this.fold[i] === fold ? 0 : one));
+      const start = this.starts[fold];
+      const { x } = solveShifted(
+        l,
+        weights,
+        alpha,
+        this.diagonal,
+        weights.map((one, i) => one * y[i]!),
+        { tolerance: 1e-8, ...(start ? { start } : {}) },
+        this.watch,
+      );
+      this.starts[fold] = x;
+      for (let i = 0; i < x.length; i++)
+        if (this.fold[i] === fold && this.predictable[i] === 1) total += s[i]! * (y[i]! - x[i]!) ** 2;
+    }
+    return total / this.count;
+  }
+}
+
+/** 1 for members whose component holds an observed member of another fold. */
+function predictableOf({ l, observed }: Problem, fold: Int32Array): Uint8Array {
+  // The regularised Laplacian ties everybody to everybody.
+  const labels = l.kind === 'regularised' ? new Int32Array(l.n) : components(l.network).labels;
+  const first = new Map<number, number>();
+  const several = new Set<number>();
+  observed.forEach((one, i) => {
+    if (one === 0) return;
+    const label = labels[i]!;
+    const seen = first.get(label);
+    if (seen === undefined) first.set(label, fold[i]!);
+    else if (seen !== fold[i]) several.add(label);
+  });
+  return observed.map((one, i) => (one === 1 && several.has(labels[i]!) ? 1 : 0));
+}

@@ -128,7 +128,7 @@ function smoothExactly(
   const choose = (system: ExactSystem): number => {
     if (strength.kind === 'given') return strength.alpha;
     if (strength.kind === 'hold-out') {
-      const folds = new HoldOut(problem, seed, watch);
+      const folds = new HoldOut(problem, seed, basis, watch);
       const found = searchStrength((alpha) => folds.error(alpha), low, high, 1e-2);
       end = found.end;
       return found.alpha;
@@ -177,7 +177,7 @@ function smoothLarge(
   let end: 'low' | 'high' | null = null;
   const choose = (system: LargeSystem, near?: number): number => {
     if (strength.kind === 'given') return strength.alpha;
-    const folds = strength.kind === 'hold-out' ? new HoldOut(problem, seed, watch) : null;
+    const folds = strength.kind === 'hold-out' ? new HoldOut(problem, seed, null, watch) : null;
     const found: Found = folds
       ? searchStrength((alpha) => folds.error(alpha), low, high, 0.05)
       : strength.kind === 'gcv'

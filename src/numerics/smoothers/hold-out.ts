@@ -1,7 +1,7 @@
 import { components } from '../network';
 import { createRandom } from '../random';
 import { cholesky, choleskySolve, solveShifted } from '../solvers';
-import { CancelledError, UnanswerableError, type Watch } from '../types';
+import { CancelledError, NotConvergedError, UnanswerableError, type Watch } from '../types';
 import { diagonalOf } from './diagonal';
 import { toSpectral, type ExactBasis } from './exact-basis';
 import type { Problem } from './model';
@@ -70,7 +70,7 @@ export class HoldOut {
     this.exact = basis && new ExactFolds(problem, basis, members);
   }
 
-  /** The criterion at strength α > 0; by conjugate gradients from solves to 1e-8, fastest for α close to the last one. */
+  /** The criterion at strength α > 0, Infinity where it cannot be told; by conjugate gradients from solves to 1e-8, fastest for α close to the last one. */
   error(alpha: number): number {
     if (this.watch?.cancelled?.()) throw new CancelledError();
     if (this.exact) return this.exact.total(alpha) / this.count;
@@ -142,11 +142,22 @@ class ExactFolds {
           free[f * size + g] = (f === g ? 1 : 0) - sum;
         }
       }
-      cholesky(free, size);
+      // Ties so weak that rounding leaves nothing of them: this strength cannot be tried.
+      if (!isFactored(free, size)) return Infinity;
       choleskySolve(free, size, rest);
       for (const one of rest) total += one * one;
     }
     return total;
+  }
+}
+
+function isFactored(a: Float64Array, size: number): boolean {
+  try {
+    cholesky(a, size);
+    return true;
+  } catch (error) {
+    if (error instanceof NotConvergedError) return false;
+    throw error;
   }
 }
 

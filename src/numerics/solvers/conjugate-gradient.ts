@@ -1,5 +1,5 @@
 import type { Operator } from '../operators';
-import { CancelledError, NotConvergedError, type Watch } from '../types';
+import { CancelledError, NotConvergedError, UnanswerableError, type Watch } from '../types';
 
 export interface SolveResult {
   readonly x: Float64Array;
@@ -19,6 +19,8 @@ const dot = (a: Float64Array, b: Float64Array): number => {
  *
  * @param s weights ≥ 0; every component of the network must have a positive one
  * @param diagonal diagonal of L
+ * @param b right-hand side, finite
+ * @throws UnanswerableError `bad-values` when b or α is not finite
  * @throws NotConvergedError above `ceiling` iterations
  */
 export function solveShifted(
@@ -36,6 +38,11 @@ export function solveShifted(
   const x = options.start ? Float64Array.from(options.start) : new Float64Array(n);
   const size = Math.sqrt(dot(b, b));
   if (size === 0) return { x: new Float64Array(n), residual: 0 };
+  if (!Number.isFinite(size) || !(alpha >= 0 && alpha < Infinity))
+    throw new UnanswerableError(
+      'bad-values',
+      'The equations of the smoothing hold numbers that are not finite.',
+    );
   const r = new Float64Array(n);
   const p = new Float64Array(n);
   const q = new Float64Array(n);

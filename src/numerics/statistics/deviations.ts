@@ -33,3 +33,34 @@ export function scaledDeviations(values: Float64Array): Float64Array {
     );
   return z.map((value) => value / most);
 }
+
+/** Beyond these magnitudes squares leave the range of doubles. */
+const LARGEST = 1e100;
+const SMALLEST = 1e-100;
+
+/**
+ * Refuses values that no statistic of squares can be made of, in words.
+ * @param values any length, NaN where missing
+ * @throws UnanswerableError `bad-values` on an infinite value, one beyond ±1e100, or a range below 1e-100 that is not 0
+ */
+export function checkValues(values: Float64Array): void {
+  let least = Infinity;
+  let most = -Infinity;
+  for (const value of values) {
+    if (Number.isNaN(value)) continue;
+    if (Math.abs(value) === Infinity)
+      throw new UnanswerableError('bad-values', 'A value of this attribute is infinite.');
+    if (Math.abs(value) > LARGEST)
+      throw new UnanswerableError(
+        'bad-values',
+        'The values of this attribute go beyond 1e100, too far to compute with; use a larger unit.',
+      );
+    least = Math.min(least, value);
+    most = Math.max(most, value);
+  }
+  if (most > least && most - least < SMALLEST)
+    throw new UnanswerableError(
+      'bad-values',
+      'The values of this attribute differ by less than 1e-100, too little to compute with; use a smaller unit.',
+    );
+}

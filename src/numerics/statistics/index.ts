@@ -1,3 +1,4 @@
+export { checkValues } from './deviations';
 export { energyCurve, type EnergyBand, type EnergyCurve } from './energy-curve';
 export { benjaminiHochberg, median } from './false-discovery';
 export { globalStatistics, type GlobalStatistic, type GlobalStatistics } from './global';

@@ -1,5 +1,6 @@
 import { UnanswerableError, type Watch } from '../types';
 import { consistencyFactor, smallSampleFactor } from './covariance-factors';
+import { checkValues } from './deviations';
 import { benjaminiHochberg, median } from './false-discovery';
 import { chiSquaredP, chiSquaredQuantile } from './gamma';
 import { COVERED, coveredCount, minimumCovariance, SingularError } from './minimum-covariance';
@@ -50,7 +51,7 @@ const CAREFUL = 50;
  *
  * @param columns k columns of n standardised departures, NaN where not tested; no unit is assumed
  * @param options.names the attributes, for the words of a refusal
- * @throws UnanswerableError `no-attributes`; `bad-values` on infinite values; `too-few-observed` unless k < complete
+ * @throws UnanswerableError `no-attributes`; `bad-values` on infinite values and those beyond 1e100; `too-few-observed` unless k < complete
  *   members / 5; `constant-attribute` or `collinear-attribute`, with its name, when 75 % of them lie on a hyperplane
  */
 export function multiDeparture(
@@ -60,7 +61,7 @@ export function multiDeparture(
 ): MultiDeparture {
   const k = columns.length;
   const n = columns[0]?.length ?? 0;
-  checkColumns(columns, options.names);
+  checkColumns(columns);
   const rows = Int32Array.from({ length: n }, (_, i) => i).filter((i) =>
     columns.every((column) => !Number.isNaN(column[i]!)),
   );
@@ -150,14 +151,13 @@ function blockOf({ centre, covariance }: Scatter, there: readonly number[]): Sca
 const nameOf = (names: readonly string[] | undefined, a: number): string =>
   names?.[a] === undefined ? `attribute ${a + 1}` : `“${names[a]}”`;
 
-function checkColumns(columns: readonly Float64Array[], names: readonly string[] | undefined): void {
+function checkColumns(columns: readonly Float64Array[]): void {
   if (columns.length === 0)
     throw new UnanswerableError('no-attributes', 'Choose at least one attribute to compare members by.');
-  columns.forEach((column, a) => {
+  columns.forEach((column) => {
     if (column.length !== columns[0]!.length)
       throw new UnanswerableError('bad-values', 'The attributes are not of the same members.');
-    if (column.some((one) => Math.abs(one) === Infinity))
-      throw new UnanswerableError('bad-values', `A departure in ${nameOf(names, a)} is not finite.`);
+    checkValues(column);
   });
 }
 

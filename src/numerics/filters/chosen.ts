@@ -66,7 +66,8 @@ export function checkFilter(filter: ChosenFilter): void {
   } else if (!isAmount(filter.cutoff)) refuse('The cut-off must be 0 or a positive number.');
 }
 
-function exactly(
+/** By the whole eigenbasis; `applyFilter` up to 2,000 members. */
+export function exactly(
   net: Network,
   laplacian: LaplacianKind,
   filter: ChosenFilter,
@@ -135,7 +136,8 @@ function byLeading(
 
 const MOST_ORDER = 4_000;
 
-function chebyshev(
+/** By Chebyshev polynomials; `applyFilter` above 2,000 members. */
+export function chebyshev(
   net: Network,
   laplacian: LaplacianKind,
   filter: ChosenFilter,

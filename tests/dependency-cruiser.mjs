@@ -6,8 +6,8 @@ export default {
   forbidden: [
     never(
       'numerics-pure',
-      'The numerical core knows typed arrays and ml-matrix, nothing else.',
-      { path: '^src/numerics' },
+      'The numerical core knows typed arrays and ml-matrix, nothing else; its second thread is one of Node.js.',
+      { path: '^src/numerics', pathNot: '^src/numerics/kernels/second-thread' },
       { pathNot: '^src/numerics|^node_modules/ml-matrix' },
     ),
     never(

@@ -1,9 +1,10 @@
-import { applyFilter, type ChosenFilter } from './filters';
+import { applyFilter, checkFilter, type ChosenFilter } from './filters';
 import { components, subnetwork } from './network';
 import { laplacianOperator, meanStrength } from './operators';
 import { EXACT_UP_TO, smooth, type Problem, type Smoothing, type Strength } from './smoothers';
 import {
   benjaminiHochberg,
+  checkValues,
   globalStatistics,
   localMoran,
   median,
@@ -16,7 +17,7 @@ import { UnanswerableError, type LaplacianKind, type Network, type Watch } from 
 
 export type ReadingFilter =
   | { readonly kind: 'two-level' }
-  | { readonly kind: 'tikhonov'; readonly alpha: number | 'gcv' }
+  | { readonly kind: 'tikhonov'; readonly alpha: number | 'gcv' | 'hold-out' }
   | ChosenFilter;
 
 export interface ReadingInput {
@@ -34,14 +35,22 @@ export interface ReadingInput {
   readonly seed: number;
 }
 
+/** Of each member. NaN stands for "none", as said with each. */
 export interface ReadingColumns {
+  /** NaN where missing. */
   readonly value: Float64Array;
+  /** NaN in components without a value. */
   readonly smoothed: Float64Array;
+  /** NaN where smoothed is, and for filters that leave no estimate of the level (high-pass, band-pass, Chebyshev). */
   readonly standardError: Float64Array;
+  /** NaN where missing, and where the own score is the only evidence. */
   readonly departure: Float64Array;
+  /** NaN where missing, and above 2,000 members for filters. */
   readonly leverage: Float64Array;
   readonly leverageExact: Uint8Array;
+  /** NaN where departure is, and for everybody where sigma is 0. */
   readonly z: Float64Array;
+  /** NaN where not tested. */
   readonly p: Float64Array;
   readonly q: Float64Array;
   readonly observed: Uint8Array;
@@ -52,7 +61,9 @@ export interface ReadingColumns {
 
 export interface ReadingResult {
   readonly columns: ReadingColumns;
+  /** NaN for filters that have none. */
   readonly alpha: number;
+  /** 0 where everybody's smoothed score is the recorded one. */
   readonly sigma: number;
   readonly sigmaLikelihood: number;
   readonly observed: number;
@@ -68,7 +79,7 @@ export interface ReadingResult {
    * 1 − Σ departure² / Σ (y − mean of the others)², never below 0.
    */
   readonly explained: number;
-  /** Median |departure|. */
+  /** Median |departure|; NaN when nobody has one. */
   readonly typical: number;
   readonly residual: number;
   readonly notes: readonly string[];
@@ -128,8 +139,8 @@ function smoothMembers(
   };
   const strength: Strength = twoLevel
     ? { kind: 'restricted-likelihood' }
-    : filter.alpha === 'gcv'
-      ? { kind: 'gcv' }
+    : typeof filter.alpha === 'string'
+      ? { kind: filter.alpha }
       : { kind: 'given', alpha: filter.alpha };
   const fit = smooth(problem, strength, twoLevel, input.seed, watch);
   const spread = (of: Float64Array): Float64Array => {
@@ -200,6 +211,7 @@ function filterMembers(
   const count = observed.reduce((sum, one) => sum + one, 0);
   const trace = filtered.diagonal.reduce((sum, one) => sum + one, 0);
   const sigmaLikelihood = Math.sqrt(rss / Math.max(1, count - (Number.isNaN(trace) ? 0 : trace)));
+  const used = sigma > 0 ? sigma : sigmaLikelihood;
   return {
     alpha: NaN,
     smoothed: filtered.values,
@@ -209,16 +221,32 @@ function filterMembers(
     quadratic: rss,
     degrees: count,
     residual: filtered.residual,
-    sigma: sigma > 0 ? sigma : sigmaLikelihood,
+    sigma: used,
     sigmaLikelihood,
     departure,
-    z: raw.map((one) => (sigma > 0 ? one / sigma : NaN)),
+    z: raw.map((one) => (used > 0 ? one / used : NaN)),
     zeroed: new Uint8Array(n),
     notes: [...notes, ...filtered.notes],
   };
 }
 
-function checkInput(net: Network, values: Float64Array, observed: Uint8Array): void {
+function checkInput(net: Network, input: ReadingInput, observed: Uint8Array): void {
+  const { values, precision, groups, filter, permutations } = input;
+  if (
+    values.length !== net.n ||
+    (precision?.length ?? net.n) !== net.n ||
+    (groups?.length ?? net.n) !== net.n
+  )
+    throw new UnanswerableError('bad-values', 'The attribute is not of the members of this network.');
+  checkValues(values);
+  if (precision?.some((one) => one > 1e100 || (one > 0 && one < 1e-100)))
+    throw new UnanswerableError('bad-values', 'Precision weights must lie between 1e-100 and 1e100.');
+  if (!Number.isInteger(permutations) || permutations < 0)
+    throw new UnanswerableError(
+      'bad-permutations',
+      'The number of shuffles must be a whole number of 0 or more.',
+    );
+  if (!isSmoother(filter)) checkFilter(filter);
   const seen = Array.from(values).filter((_, i) => observed[i] === 1);
   if (net.targets.length === 0)
     throw new UnanswerableError(
@@ -262,7 +290,7 @@ function smoothnessOf(
 export function takeReading(net: Network, input: ReadingInput, watch?: Watch): ReadingResult {
   const { values } = input;
   const observed = Uint8Array.from(values, (one) => (Number.isNaN(one) ? 0 : 1));
-  checkInput(net, values, observed);
+  checkInput(net, input, observed);
   const inner: Watch | undefined = watch && {
     ...watch,
     progress: (done, step) => watch.progress?.(0.75 * done, step),

@@ -8,7 +8,7 @@ const keep = z.int().min(1).max(2_000);
 export const readingFilterSchema = z.union(
   [
     z.strictObject({ kind: z.literal('two-level'), groups: z.int().min(1).max(50).optional() }),
-    z.strictObject({ kind: z.literal('tikhonov'), alpha: z.union([positive, z.literal('gcv')]) }),
+    z.strictObject({ kind: z.literal('tikhonov'), alpha: z.union([positive, z.enum(['gcv', 'hold-out'])]) }),
     z.strictObject({ kind: z.literal('heat'), tau: positive }),
     z.strictObject({ kind: z.enum(['low-pass', 'high-pass']), cutoff: frequency }),
     z.strictObject({ kind: z.enum(['low-pass', 'high-pass']), keep }),

@@ -9,7 +9,10 @@ export function filterWords(filter: ReadingFilter): string {
     case 'two-level':
       return 'Group levels and ties';
     case 'tikhonov':
-      return filter.alpha === 'gcv' ? 'Tikhonov, cross-validated' : `Tikhonov, strength ${filter.alpha}`;
+      if (filter.alpha === 'gcv') return 'Tikhonov, cross-validated';
+      return filter.alpha === 'hold-out'
+        ? 'Tikhonov, chosen on left-out scores'
+        : `Tikhonov, strength ${filter.alpha}`;
     case 'heat':
       return `Heat kernel, time ${filter.tau}`;
     case 'band-pass':

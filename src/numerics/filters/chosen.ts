@@ -30,6 +30,9 @@ function response(filter: ChosenFilter, value: number, rank: number): number {
  * Filters a full signal in the graph Fourier domain (Shuman, Narang, Frossard, Ortega & Vandergheynst 2013):
  * exactly from the eigenbasis up to 2,000 members, by Chebyshev polynomials above (Hammond, Vandergheynst &
  * Gribonval 2011; Jackson damping for the ideal filters).
+ * @param signal length n, finite, any unit
+ * @throws UnanswerableError `missing-values`; `bad-filter` on settings out of range; `too-many-frequencies` and
+ *   `filter-too-long` where a large network cannot be filtered so
  */
 export function applyFilter(
   net: Network,
@@ -38,12 +41,33 @@ export function applyFilter(
   signal: Float64Array,
   watch?: Watch,
 ): Filtered {
+  checkFilter(filter);
+  if (signal.length !== net.n || !signal.every(Number.isFinite))
+    throw new UnanswerableError('missing-values', 'A filter needs a finite value of every member.');
   if (net.n <= EXACT_UP_TO) return exactly(net, laplacian, filter, signal, watch);
   if ('keep' in filter) return byLeading(net, laplacian, filter, signal, watch);
   return chebyshev(net, laplacian, filter, signal, watch);
 }
 
-function exactly(
+/** @throws UnanswerableError `bad-filter` in words */
+export function checkFilter(filter: ChosenFilter): void {
+  const refuse = (message: string): never => {
+    throw new UnanswerableError('bad-filter', message);
+  };
+  const isAmount = (one: number): boolean => one >= 0 && Number.isFinite(one);
+  if (filter.kind === 'heat') {
+    if (!isAmount(filter.tau)) refuse('The heat time must be 0 or a positive number.');
+  } else if (filter.kind === 'band-pass') {
+    if (!isAmount(filter.from) || !isAmount(filter.to) || filter.to < filter.from)
+      refuse('A band of frequencies runs from one number of 0 or more to one that is not below it.');
+  } else if ('keep' in filter) {
+    if (!Number.isInteger(filter.keep) || filter.keep < 1)
+      refuse('The number of frequencies to keep must be a whole number of 1 or more.');
+  } else if (!isAmount(filter.cutoff)) refuse('The cut-off must be 0 or a positive number.');
+}
+
+/** By the whole eigenbasis; `applyFilter` up to 2,000 members. */
+export function exactly(
   net: Network,
   laplacian: LaplacianKind,
   filter: ChosenFilter,
@@ -112,7 +136,8 @@ function byLeading(
 
 const MOST_ORDER = 4_000;
 
-function chebyshev(
+/** By Chebyshev polynomials; `applyFilter` above 2,000 members. */
+export function chebyshev(
   net: Network,
   laplacian: LaplacianKind,
   filter: ChosenFilter,
@@ -120,6 +145,16 @@ function chebyshev(
   watch?: Watch,
 ): Filtered {
   const l = laplacianOperator(net, laplacian);
+  if (l.norm === 0) {
+    // Without ties every frequency is 0.
+    const g = response(filter, 0, 0);
+    return {
+      values: signal.map((one) => g * one),
+      diagonal: new Float64Array(net.n).fill(g),
+      residual: 0,
+      notes: [],
+    };
+  }
   const half = l.norm / 2;
   const ideal = filter.kind !== 'heat';
   const order = ideal

@@ -1,1 +1,1 @@
-export { applyFilter, type ChosenFilter, type Filtered } from './chosen';
+export { applyFilter, checkFilter, type ChosenFilter, type Filtered } from './chosen';

@@ -8,7 +8,7 @@ export interface Agreement {
   readonly normalisedMutualInformation: number;
   /** Members that are in a group of both. */
   readonly members: number;
-  /** Crossing table: counts[r][c] members are in group rows[r] of a and columns[c] of b. Groups without members are left out. */
+  /** Crossing table, made when it is asked for: counts[r][c] members are in group rows[r] of a and columns[c] of b. Groups without members are left out. */
   readonly table: {
     readonly rows: readonly number[];
     readonly columns: readonly number[];
@@ -61,7 +61,14 @@ export function agreement(a: Int32Array, b: Int32Array): Agreement {
     adjustedRand,
     normalisedMutualInformation: mean === 0 ? 1 : Math.min(1, Math.max(0, information / mean)),
     members,
-    table: { rows, columns, counts: rows.map((r) => columns.map((c) => cells.get(r * columnsAll + c) ?? 0)) },
+    // Only when asked for: thousands of islets on both sides make a table that fills the memory.
+    get table() {
+      return {
+        rows,
+        columns,
+        counts: rows.map((r) => columns.map((c) => cells.get(r * columnsAll + c) ?? 0)),
+      };
+    },
   };
 }
 

@@ -1,4 +1,5 @@
 import type { Random } from '../random';
+import { UnanswerableError } from '../types';
 
 export interface KMeans {
   readonly labels: Int32Array;
@@ -14,7 +15,9 @@ const maximumIterations = 100;
  * k-means by Lloyd's iteration from k-means++ starts (Arthur & Vassilvitskii 2007), the best of several.
  * Above `sample` points the starts are tried on a seeded sample and the best is then settled on all points.
  *
- * @param points count × width, row-major
+ * @param points count × width, row-major, finite
+ * @param k number of groups, 1 or more; groups stay empty when there are fewer distinct points
+ * @throws UnanswerableError `bad-values` when a coordinate is not finite; `bad-k`
  */
 export function kMeans(
   points: Float64Array,
@@ -23,6 +26,10 @@ export function kMeans(
   random: Random,
   { restarts = 20, sample = 10_000 } = {},
 ): KMeans {
+  if (!points.every(Number.isFinite))
+    throw new UnanswerableError('bad-values', 'Members can only be grouped by finite coordinates.');
+  if (!Number.isInteger(k) || k < 1 || !(restarts >= 1))
+    throw new UnanswerableError('bad-k', 'The number of groups must be a whole number of 1 or more.');
   const count = points.length / width;
   const tried = count > sample ? pick(points, width, count, sample, random) : points;
   let best: KMeans | null = null;

@@ -2,12 +2,15 @@ const GOLDEN = (Math.sqrt(5) - 1) / 2;
 
 /**
  * Smallest value of a function of log₁₀ α: a grid of half decades, then golden section around the best.
+ * @param low, high range of log₁₀ α, half decades apart
+ * @param precision of log₁₀ α
  * @returns the place, and whether it lies at an end of the range
  */
 export function searchStrength(
   of: (alpha: number) => number,
   low: number,
   high: number,
+  precision = 1e-4,
 ): { alpha: number; end: 'low' | 'high' | null } {
   const steps = Math.round((high - low) * 2);
   let best = 0;
@@ -27,7 +30,7 @@ export function searchStrength(
   let d = a + GOLDEN * (b - a);
   let fc = of(10 ** c);
   let fd = of(10 ** d);
-  while (b - a > 1e-4) {
+  while (b - a > precision) {
     if (fc < fd) {
       b = d;
       d = c;

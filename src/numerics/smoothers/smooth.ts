@@ -4,6 +4,7 @@ import type { LaplacianKind, Watch } from '../types';
 import { UnanswerableError } from '../types';
 import { exactBasis } from './exact-basis';
 import { ExactSystem } from './exact-system';
+import { HoldOut } from './hold-out';
 import { LargeSystem } from './large-system';
 import type { Fit, Problem } from './model';
 import { searchStrength } from './search';
@@ -19,20 +20,30 @@ const REFINED = 120;
 export type Strength =
   | { readonly kind: 'given'; readonly alpha: number }
   | { readonly kind: 'gcv' }
+  /** Ten seeded folds of left-out scores; only for a smoother without levels. */
+  | { readonly kind: 'hold-out' }
   | { readonly kind: 'restricted-likelihood' };
 
 export interface Smoothing extends Fit {
+  /** 0 where the fit is exact for everybody. */
   readonly sigma: number;
   readonly sigmaLikelihood: number;
+  /** Left-out departure; NaN for missing members and for those whose own score is their only evidence. */
   readonly departure: Float64Array;
-  /** Standardised departure; NaN for missing members. */
+  /** Standardised departure; NaN where departure is, and for everybody where sigma is 0. */
   readonly z: Float64Array;
   /** 1 for members whose score had no part in the fit. */
   readonly zeroed: Uint8Array;
   readonly notes: readonly string[];
 }
 
-/** Departures of a fit: left-out for members with weight, plain for those without, who were left out by the fit. */
+/** A spread below this share of the scores' own spread is what rounding leaves of an exact fit. */
+const EXACT_FIT = 1e-9;
+
+/**
+ * Departures of a fit: left-out for members with weight, plain for those without, who were left out by the fit.
+ * Where the fit is exact for everybody there is no spread to measure by: sigma is 0 and z NaN.
+ */
 function standardise(
   problem: Problem,
   fit: Fit,
@@ -52,11 +63,27 @@ function standardise(
     departure[i] = out ? rest : rest / free;
     z[i] = (Math.sqrt(s[i]!) * rest) / Math.sqrt(out ? 1 + s[i]! * fit.variance[i]! : free);
   }
-  const sigma = 1.4826 * median(z.map(Math.abs));
-  const sigmaLikelihood = Math.sqrt(fit.quadratic / Math.max(1, fit.degrees));
-  const used = sigma > 0 ? sigma : sigmaLikelihood;
-  for (let i = 0; i < n; i++) z[i] = z[i]! / used;
-  return { departure, z, sigma: used, sigmaLikelihood };
+  const floor = EXACT_FIT * spreadOf(problem);
+  const robust = 1.4826 * median(z.map(Math.abs));
+  const likelihood = Math.sqrt(fit.quadratic / Math.max(1, fit.degrees));
+  const sigmaLikelihood = likelihood > floor ? likelihood : 0;
+  const sigma = robust > floor ? robust : sigmaLikelihood;
+  for (let i = 0; i < n; i++) z[i] = sigma > 0 ? z[i]! / sigma : NaN;
+  return { departure, z, sigma, sigmaLikelihood };
+}
+
+/** Root mean square of the observed scores about their mean, in the unit of √s · score. */
+function spreadOf({ y, s }: Problem): number {
+  let weight = 0;
+  let sum = 0;
+  let count = 0;
+  y.forEach((one, i) => {
+    weight += s[i]!;
+    sum += s[i]! * one;
+    if (s[i]! > 0) count++;
+  });
+  const mean = sum / weight;
+  return Math.sqrt(y.reduce((total, one, i) => total + s[i]! * (one - mean) ** 2, 0) / count);
 }
 
 /** Members that the next round leaves out; never all of a component or of a small problem. */
@@ -68,7 +95,7 @@ function wild(z: Float64Array, observed: Uint8Array): Uint8Array {
 }
 
 const rangeFor = (kind: LaplacianKind, strength: Strength['kind']): [number, number] =>
-  strength === 'gcv' && kind === 'combinatorial' ? [-4, 4] : [-3, 5];
+  (strength === 'gcv' || strength === 'hold-out') && kind === 'combinatorial' ? [-4, 4] : [-3, 5];
 
 /**
  * Boundary-avoiding penalty on −2 log restricted likelihood, after Chung, Rabe-Hesketh, Dorie, Gelman & Liu 2013, here
@@ -84,12 +111,20 @@ const NO_VARIATION = 2.706;
 const NOTES = {
   low: 'The fit found no stretch over which neighbours’ scores agree; the smoothed score stays close to the recorded one.',
   high: 'Beyond the levels of the groups, no resemblance of neighbours can be told from chance in this attribute.',
+  exact: 'Everybody’s smoothed score is the recorded one, so there is no spread to measure departures by.',
 } as const;
 
+/** What is said of how the strength was found, and of a fit without any departures. */
+const notesOf = (end: 'low' | 'high' | null, strength: Strength, sigma: number): string[] => [
+  ...(end && strength.kind !== 'given' ? [NOTES[end]] : []),
+  ...(sigma > 0 ? [] : [NOTES.exact]),
+];
+
 /**
- * Smooths one attribute: strength given, by generalised cross-validation, or by restricted maximum likelihood with
- * robust rounds (numerics.md, "Readings").
- * @throws UnanswerableError with fewer than three observed members
+ * Smooths one attribute: strength given, by generalised cross-validation, by ten-fold hold-out (the strength to a few
+ * per cent), or by restricted maximum likelihood with robust rounds (numerics.md, "Readings").
+ * @throws UnanswerableError `too-few-observed` with fewer than three observed members; `bad-strength` unless a given α
+ *   is positive and finite; `bad-values` when a value is not finite
  */
 export function smooth(
   problem: Problem,
@@ -104,12 +139,22 @@ export function smooth(
       'too-few-observed',
       `Only ${observed} members have a value; at least 3 are needed.`,
     );
+  if (strength.kind === 'given' && !(strength.alpha > 0 && Number.isFinite(strength.alpha)))
+    throw new UnanswerableError('bad-strength', 'The strength α must be a positive number.');
+  if (!problem.y.every(Number.isFinite) || !problem.s.every(Number.isFinite))
+    throw new UnanswerableError('bad-values', 'Values and precision weights must be finite.');
   return problem.l.n <= EXACT_UP_TO
-    ? smoothExactly(problem, strength, robust, watch)
+    ? smoothExactly(problem, strength, robust, seed, watch)
     : smoothLarge(problem, strength, robust, seed, watch);
 }
 
-function smoothExactly(problem: Problem, strength: Strength, robust: boolean, watch?: Watch): Smoothing {
+function smoothExactly(
+  problem: Problem,
+  strength: Strength,
+  robust: boolean,
+  seed: number,
+  watch?: Watch,
+): Smoothing {
   const basis = exactBasis(
     problem,
     watch && { ...watch, progress: (done, step) => watch.progress?.(0.7 * done, step) },
@@ -119,6 +164,17 @@ function smoothExactly(problem: Problem, strength: Strength, robust: boolean, wa
   let end: 'low' | 'high' | null = null;
   const choose = (system: ExactSystem): number => {
     if (strength.kind === 'given') return strength.alpha;
+    if (strength.kind === 'hold-out') {
+      const folds = new HoldOut(problem, seed, basis, watch);
+      const found = searchStrength((alpha) => folds.error(alpha), low, high, 1e-2);
+      if (folds.error(found.alpha) === Infinity)
+        throw new UnanswerableError(
+          'ties-too-weak',
+          'The ties are too weak or too uneven to predict left-out scores at any strength; choose one yourself.',
+        );
+      end = found.end;
+      return found.alpha;
+    }
     const found = searchStrength(
       (alpha) =>
         strength.kind === 'gcv' ? system.crossValidation(alpha) : system.criterion(alpha) + boundary(alpha),
@@ -144,10 +200,17 @@ function smoothExactly(problem: Problem, strength: Strength, robust: boolean, wa
     if (same) break;
   }
   watch?.progress?.(0.9, 'Fitting');
-  const system = new ExactSystem(problem, basis, zeroed);
-  const fit = system.fit(choose(system));
-  const notes = end && strength.kind !== 'given' ? [NOTES[end]] : [];
-  return { ...fit, ...standardise(problem, fit, zeroed), zeroed, notes };
+  const finish = (): Smoothing => {
+    const system = new ExactSystem(problem, basis, zeroed);
+    const fit = system.fit(choose(system));
+    const measured = standardise(problem, fit, zeroed);
+    return { ...fit, ...measured, zeroed, notes: notesOf(end, strength, measured.sigma) };
+  };
+  const found = finish();
+  if (found.sigma > 0 || !zeroed.includes(1)) return found;
+  // The wild scores were all that varied: they are the spread, and stay in.
+  zeroed = new Uint8Array(problem.l.n);
+  return finish();
 }
 
 function smoothLarge(
@@ -179,8 +242,10 @@ function smoothBySolving(
   let end: 'low' | 'high' | null = null;
   const choose = (system: LargeSystem, near?: number): number => {
     if (strength.kind === 'given') return strength.alpha;
-    const found =
-      strength.kind === 'gcv'
+    const folds = strength.kind === 'hold-out' ? new HoldOut(problem, seed, systems, watch) : null;
+    const found: Found = folds
+      ? searchStrength((alpha) => folds.error(alpha), low, high, 0.05)
+      : strength.kind === 'gcv'
         ? coarseMinimum((alpha) => system.crossValidation(alpha), low, high, watch)
         : rootOf(
             (alpha) => system.score(alpha),
@@ -205,18 +270,26 @@ function smoothBySolving(
       alpha = choose(new LargeSystem(problem, zeroed, seed, systems, watch), Math.log10(alpha));
     if (same) break;
   }
-  const fit = new LargeSystem(problem, zeroed, seed, systems, watch).fit(alpha);
-  const first = standardise(problem, fit, zeroed);
+  let fit = new LargeSystem(problem, zeroed, seed, systems, watch).fit(alpha);
+  let first = standardise(problem, fit, zeroed);
+  if (first.sigma === 0 && zeroed.includes(1)) {
+    // The wild scores were all that varied: they are the spread, and stay in.
+    zeroed = new Uint8Array(problem.l.n);
+    const system = new LargeSystem(problem, zeroed, seed, systems, watch);
+    fit = system.fit(choose(system));
+    first = standardise(problem, fit, zeroed);
+  }
   const near = Array.from(first.z.keys())
     .filter((i) => Math.abs(first.z[i]!) > 2.2)
     .sort((a, b) => Math.abs(first.z[b]!) - Math.abs(first.z[a]!))
     .slice(0, REFINED);
   fit.refine(near);
+  const measured = standardise(problem, fit, zeroed);
   const notes = [
-    ...(end && strength.kind !== 'given' ? [NOTES[end]] : []),
+    ...notesOf(end, strength, measured.sigma),
     `Leverages were estimated with seeded probes, and solved exactly for the ${near.length} members that stand out most.`,
   ];
-  return { ...fit, ...standardise(problem, fit, zeroed), zeroed, notes };
+  return { ...fit, ...measured, zeroed, notes };
 }
 
 interface Found {

@@ -1,6 +1,6 @@
 import { KernelMemory } from '../kernels';
 import { advance8, direct8, matrixBytes, WIDTH, type LaplacianOperator } from '../operators';
-import { CancelledError, NotConvergedError, type Watch } from '../types';
+import { CancelledError, NotConvergedError, UnanswerableError, type Watch } from '../types';
 
 export interface SolveResult {
   readonly x: Float64Array;
@@ -54,6 +54,7 @@ export class ShiftedSystems {
   /**
    * @param s weights ≥ 0; every component of the network must have a positive one
    * @param right any number of right-hand sides
+   * @throws UnanswerableError `bad-values` when a right-hand side or α is not finite
    * @throws NotConvergedError above the ceiling of iterations
    */
   solve(
@@ -90,6 +91,11 @@ export class ShiftedSystems {
     starts.forEach((start, v) => {
       if (start && sizes[v]! > 0) this.put(start, v, this.x);
     });
+    if (!sizes.every(Number.isFinite) || !(alpha >= 0 && alpha < Infinity))
+      throw new UnanswerableError(
+        'bad-values',
+        'The equations of the smoothing hold numbers that are not finite.',
+      );
     let residuals = this.trueResiduals(alpha, right, sizes);
     for (let restart = 0; restart < RESTARTS && left > 0; restart++) {
       const active = residuals.map((one) => (one > tolerance ? 1 : 0));

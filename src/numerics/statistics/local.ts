@@ -1,15 +1,18 @@
 import { benjaminiHochberg } from './false-discovery';
 import { twoSidedP } from './normal';
-import { rowStandardised, type ObservedTies } from './weights';
+import { rowStandardised, weightUnit, type ObservedTies } from './weights';
 
 /** Codes of `quadrant`: own deviation, then the neighbours'. 0 where undefined. */
 export const QUADRANTS = [null, 'HH', 'LL', 'HL', 'LH'] as const;
 
+/** Of each member; I and its moments are NaN for members without a value. */
 export interface LocalMoran {
   readonly I: Float64Array;
   readonly expectation: Float64Array;
   readonly variance: Float64Array;
+  /** NaN also where there is nothing to test: at the mean, without an observed neighbour, or tied alike to everyone. */
   readonly z: Float64Array;
+  /** Two-sided normal p and its Benjamini–Hochberg q; NaN where z is. */
   readonly p: Float64Array;
   readonly q: Float64Array;
   /** Place in QUADRANTS. */
@@ -20,9 +23,11 @@ export interface LocalMoran {
  * Local Moran I_i = z_i Σ_j w_ij z_j / m₂, m₂ = Σz²/n (Anselin 1995), with moments under conditional
  * randomisation (Sokal, Oden & Thomson 1998), two-sided normal p, and q by Benjamini & Hochberg.
  * @param total members of the network; entries of members that did not enter are NaN
+ * @param style `row`: weights divided by their row's sum; `raw`: as they are, I in their unit
  */
 export function localMoran(ties: ObservedTies, total: number, style: 'row' | 'raw' = 'row'): LocalMoran {
-  const w = style === 'row' ? rowStandardised(ties) : ties.weights;
+  const unit = style === 'row' ? 1 : weightUnit(ties.weights);
+  const w = style === 'row' ? rowStandardised(ties) : ties.weights.map((one) => one / unit);
   const { n, z, squares } = ties;
   const m2 = squares / n;
   const nan = (): Float64Array => new Float64Array(total).fill(NaN);
@@ -50,9 +55,9 @@ export function localMoran(ties: ObservedTies, total: number, style: 'row' | 'ra
     // Var = (z_i/m₂)² · n/(n−2) · (Σw² − (Σw)²/(n−1)) · (m₂ − z_i²/(n−1))
     const variance =
       (own / m2) ** 2 * (n / (n - 2)) * (sumSquares - (sum * sum) / (n - 1)) * (m2 - (own * own) / (n - 1));
-    out.I[member] = value;
-    out.expectation[member] = expectation;
-    out.variance[member] = Math.max(0, variance);
+    out.I[member] = value * unit;
+    out.expectation[member] = expectation * unit;
+    out.variance[member] = Math.max(0, variance) * unit * unit;
     // A member at the mean, or tied to everyone: the neighbours cannot be drawn otherwise, so there is no test.
     const spread = sumSquares - (sum * sum) / (n - 1);
     const testable = spread > 1e-12 * sumSquares && sum > 0 && own !== 0 && variance > 0;

@@ -4,6 +4,7 @@
  */
 export function erfc(x: number): number {
   if (x < 0) return 2 - erfc(-x);
+  if (x === Infinity) return 0;
   if (x < 1) {
     // erf(x) = 2/√π e^{−x²} Σ 2^k x^{2k+1} / (1·3·…·(2k+1))
     let term = x;
@@ -29,5 +30,5 @@ export function erfc(x: number): number {
   return Math.exp(-x * x) / (Math.sqrt(Math.PI) * f);
 }
 
-/** Two-sided p of a standard normal z; exact down to the smallest doubles. */
+/** Two-sided p of a standard normal z; exact down to the smallest doubles, 0 for infinite z, NaN for NaN. */
 export const twoSidedP = (z: number): number => Math.min(1, erfc(Math.abs(z) / Math.SQRT2));

@@ -1,4 +1,5 @@
 import { UnanswerableError, type Network } from '../types';
+import { checkValues } from './deviations';
 
 /** Members with a value, and the ties among them. */
 export interface ObservedTies {
@@ -21,13 +22,17 @@ export interface ObservedTies {
  * What autocorrelation statistics work on: the ties among members with a value. Mean and spread are over all of
  * them; n counts those with an observed neighbour (the `adjust.n` convention of Bivand & Wong 2018).
  * @param alone whether members without an observed neighbour count in n: never in the product, but in some libraries
- * @throws UnanswerableError when fewer than four members enter, or all values are equal
+ * @throws UnanswerableError `too-few-observed` when fewer than four members enter; `constant-attribute` when all values
+ *   are equal; `bad-values` on infinite ones and those beyond 1e100
  */
 export function observedTies(
   net: Network,
   values: Float64Array,
   alone: 'left-out' | 'counted' = 'left-out',
 ): ObservedTies {
+  if (values.length !== net.n)
+    throw new UnanswerableError('bad-values', 'The attribute is not of the members of this network.');
+  checkValues(values);
   const place = new Int32Array(net.n).fill(-1);
   const members: number[] = [];
   for (let i = 0; i < net.n; i++)
@@ -74,7 +79,7 @@ export function observedTies(
   return { n, entered: counted, members: Int32Array.from(members), offsets, targets, weights, z, squares };
 }
 
-/** Weights divided by their row's sum: style W. */
+/** Weights divided by their row's sum: style W; one for each stored tie. */
 export function rowStandardised(ties: ObservedTies): Float64Array {
   const out = Float64Array.from(ties.weights);
   for (let i = 0; i < ties.n; i++) {
@@ -83,4 +88,13 @@ export function rowStandardised(ties: ObservedTies): Float64Array {
     for (let k = ties.offsets[i]!; k < ties.offsets[i + 1]!; k++) out[k]! /= sum;
   }
   return out;
+}
+
+/**
+ * A power of two of about the size of the largest weight, 1 without weights. Dividing by it is exact and keeps squares
+ * of weights within the range of doubles; statistics that do not change with the unit of the weights keep every digit.
+ */
+export function weightUnit(weights: Float64Array): number {
+  const most = weights.reduce((largest, one) => Math.max(largest, one), 0);
+  return most > 0 ? 2 ** Math.round(Math.log2(most)) : 1;
 }

@@ -10,7 +10,7 @@ export interface Choice {
   sensitive: boolean;
 }
 
-type Kind = 'two-level' | 'gcv' | 'tikhonov' | 'heat' | 'low-pass';
+type Kind = 'two-level' | 'gcv' | 'hold-out' | 'tikhonov' | 'heat' | 'low-pass';
 
 const KINDS = [
   {
@@ -22,6 +22,11 @@ const KINDS = [
     value: 'gcv',
     label: 'Tikhonov, cross-validated',
     hint: 'One pattern along ties; its strength is the one that predicts best.',
+  },
+  {
+    value: 'hold-out',
+    label: 'Tikhonov, chosen on left-out scores',
+    hint: 'Leaves out a tenth of the scores at a time; its strength is the one that predicts them best.',
   },
   { value: 'tikhonov', label: 'Tikhonov, your strength', hint: 'A larger strength smooths more.' },
   { value: 'heat', label: 'Heat kernel', hint: 'Lets scores spread along ties for a while.' },
@@ -36,7 +41,7 @@ const LAPLACIANS = [
 
 const filterOf = (kind: Kind, amount: number | null): ReadingFilter | null => {
   if (kind === 'two-level') return { kind };
-  if (kind === 'gcv') return { kind: 'tikhonov', alpha: 'gcv' };
+  if (kind === 'gcv' || kind === 'hold-out') return { kind: 'tikhonov', alpha: kind };
   if (amount === null) return null;
   if (kind === 'tikhonov') return { kind, alpha: amount };
   return kind === 'heat' ? { kind, tau: amount } : { kind, keep: Math.round(amount) };

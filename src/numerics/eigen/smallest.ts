@@ -167,9 +167,9 @@ class Search {
         const bar = this.options.tolerance * this.norm * margin;
         const reached = share(estimates, bar, this.norm);
         const rate = checked ? (reached - checked.share) / (krylov.size - checked.size) : 0;
-        next =
-          krylov.size +
-          Math.max(stride, above === null && rate > 0 ? Math.floor((0.8 * (1 - reached)) / rate) : 0);
+        // Convergence gains pace, so what is left is told from the rate for a short way only.
+        const ahead = above === null && rate > 0 ? Math.floor((0.8 * (1 - reached)) / rate) : 0;
+        next = krylov.size + Math.min(2 * stride, Math.max(stride, ahead));
         checked = { size: krylov.size, share: reached };
         this.done = Math.max(this.done, reached);
         if (above !== null && gathered > 0.5 * Math.log(op.n) + 6) {

@@ -7,6 +7,7 @@ import {
   checkValues,
   globalStatistics,
   localMoran,
+  localPermutations,
   median,
   observedTies,
   twoSidedP,
@@ -14,6 +15,9 @@ import {
   type LocalMoran,
 } from './statistics';
 import { UnanswerableError, type LaplacianKind, type Network, type Watch } from './types';
+
+/** A stream of its own for the shuffles of local Moran. */
+const LOCAL_STREAM = 0x165667b1;
 
 export type ReadingFilter =
   | { readonly kind: 'two-level' }
@@ -57,6 +61,8 @@ export interface ReadingColumns {
   readonly tested: Uint8Array;
   readonly neighbours: Int32Array;
   readonly local: LocalMoran;
+  /** Two-sided p of local Moran by conditional permutation; NaN without an observed neighbour or without shuffles. */
+  readonly localPermutationP: Float64Array;
 }
 
 export interface ReadingResult {
@@ -304,6 +310,21 @@ export function takeReading(net: Network, input: ReadingInput, watch?: Watch): R
   const raw = globalStatistics(ties, 'raw', input.permutations, input.seed, watch);
   watch?.progress?.(0.97, 'Comparing each member with the neighbours');
   const local = localMoran(ties, net.n);
+  // q is from the p of the moments: the smallest p of 999 shuffles, 0.001, is too large for it on a large network.
+  const localPermutationP =
+    input.permutations > 0
+      ? localPermutations(
+          ties,
+          net.n,
+          input.permutations,
+          input.seed ^ LOCAL_STREAM,
+          'row',
+          watch && {
+            ...watch,
+            progress: (done, step) => watch.progress?.(0.97 + 0.03 * done, step),
+          },
+        ).twoSided
+      : new Float64Array(net.n).fill(NaN);
   const neighbours = Int32Array.from({ length: net.n }, (_, i) => net.offsets[i + 1]! - net.offsets[i]!);
   const tested = Uint8Array.from(observed, (one, i) =>
     one === 1 && neighbours[i]! >= input.neighbourFloor && Number.isFinite(fit.z[i]!) ? 1 : 0,
@@ -326,6 +347,7 @@ export function takeReading(net: Network, input: ReadingInput, watch?: Watch): R
       tested,
       neighbours,
       local,
+      localPermutationP,
     },
     alpha: fit.alpha,
     sigma: fit.sigma,

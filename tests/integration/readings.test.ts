@@ -135,6 +135,13 @@ describe('Tikhonov with α = 1 on the karate club', () => {
       expected('local_W.I'),
       'I_i',
     );
+    // Beside the p of the moments one by 199 shuffles, a whole number of two-hundredths (+1 rule).
+    for (const { localMoran } of items) {
+      expect(localMoran.permutationP).toBeGreaterThanOrEqual(1 / 200);
+      const count = 200 * localMoran.permutationP!;
+      expect(count).toBeCloseTo(Math.round(count), 9);
+      expect(localMoran.permutationP).toBeLessThanOrEqual(1);
+    }
   });
 
   test('the same inputs and seed give the same bytes', async () => {

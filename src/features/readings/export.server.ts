@@ -26,6 +26,7 @@ const HEAD = [
   ['local_moran_p', (line: MemberLine) => line.local_p],
   ['local_moran_q', (line: MemberLine) => line.local_q],
   ['quadrant', (line: MemberLine) => line.quadrant],
+  ['local_moran_permutation_p', (line: MemberLine) => line.local_permutation_p],
 ] as const;
 
 /** Streams every member of a reading as CSV; written to the audit log before the first byte leaves. */

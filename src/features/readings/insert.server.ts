@@ -25,10 +25,11 @@ export async function saveMembers(
     const { local } = columns;
     await sequelize.query(
       `INSERT INTO reading_members (reading_id, ordinal, value, smoothed, standard_error, departure, leverage, z, p, q,
-         observed, tested, neighbours, local_i, local_expectation, local_variance, local_z, local_p, local_q, quadrant)
+         observed, tested, neighbours, local_i, local_expectation, local_variance, local_z, local_p, local_q,
+         local_permutation_p, quadrant)
        SELECT $1, * FROM unnest($2::int[], $3::float8[], $4::float8[], $5::float8[], $6::float8[], $7::float8[],
          $8::float8[], $9::float8[], $10::float8[], $11::bool[], $12::bool[], $13::int[], $14::float8[], $15::float8[],
-         $16::float8[], $17::float8[], $18::float8[], $19::float8[], $20::text[])`,
+         $16::float8[], $17::float8[], $18::float8[], $19::float8[], $20::float8[], $21::text[])`,
       {
         bind: [
           readingId,
@@ -50,6 +51,7 @@ export async function saveMembers(
           numbers(local.z),
           numbers(local.p),
           numbers(local.q),
+          numbers(columns.localPermutationP),
           Array.from(local.quadrant.subarray(from, to), (code) => QUADRANTS[code] ?? null),
         ],
         transaction,

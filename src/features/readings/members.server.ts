@@ -29,6 +29,7 @@ export interface MemberLine {
   local_z: number | null;
   local_p: number | null;
   local_q: number | null;
+  local_permutation_p: number | null;
   quadrant: 'HH' | 'LL' | 'HL' | 'LH' | null;
   group_index: number | null;
 }
@@ -94,6 +95,7 @@ const present = (
     z: line.local_z,
     p: line.local_p,
     q: line.local_q,
+    permutationP: line.local_permutation_p,
     quadrant: line.quadrant,
   },
 });

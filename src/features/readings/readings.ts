@@ -148,6 +148,8 @@ export const readingMemberSchema = z
       z: number,
       p: number,
       q: number,
+      /** By conditional permutation, two-sided, by the +1 rule; q is that of the moments’ p. */
+      permutationP: number,
       quadrant: z.enum(['HH', 'LL', 'HL', 'LH']).nullable(),
     }),
     /** Group in the newest grouping of the snapshot, and an undecided or decided case about this reading. */

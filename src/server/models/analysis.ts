@@ -140,6 +140,7 @@ export class ReadingMember extends Model<
   declare localZ: CreationOptional<number | null>;
   declare localP: CreationOptional<number | null>;
   declare localQ: CreationOptional<number | null>;
+  declare localPermutationP: CreationOptional<number | null>;
   declare quadrant: CreationOptional<'HH' | 'LL' | 'HL' | 'LH' | null>;
 }
 ReadingMember.init(
@@ -163,6 +164,7 @@ ReadingMember.init(
     localZ: optionalDouble,
     localP: optionalDouble,
     localQ: optionalDouble,
+    localPermutationP: optionalDouble,
     quadrant: optionalText,
   }),
   { sequelize, tableName: 'reading_members' },

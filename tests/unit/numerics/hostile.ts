@@ -104,7 +104,7 @@ export const FILTERS: ReadingFilter[] = [
 ];
 /** Where NaN stands for "none": see the docstrings of ReadingColumns, ReadingResult, LocalMoran and GlobalStatistic. */
 export const NO_READING =
-  /^columns\.(value|smoothed|standardError|departure|leverage|z|p|q)$|^columns\.local\.|^alpha$|^typical$|^(moran|geary)\.(row|raw)\.(z|p)$/;
+  /^columns\.(value|smoothed|standardError|departure|leverage|z|p|q)$|^columns\.local\.|^columns\.localPermutationP$|^alpha$|^typical$|^(moran|geary)\.(row|raw)\.(z|p)$/;
 export const NO_GLOBAL = /^(moran|geary)\.(z|p)$/;
 export const NO_LOCAL = /^(I|expectation|variance|z|p|q)$/;
 

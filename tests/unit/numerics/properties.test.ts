@@ -259,7 +259,7 @@ describe('left-out departures are those of really leaving each member out', () =
   });
 });
 
-it('local Moran adds up to the global one: Σ I_i = S₀ I with raw weights (Anselin 1995, equation 13)', () => {
+it('local Moran adds up to the global one: Σ I_i = S₀ I with raw weights (Anselin 1995)', () => {
   fc.assert(
     fc.property(seeds, (seed) => {
       const { network } = planted(60, 3, 6, 0.3, seed);

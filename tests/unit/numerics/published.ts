@@ -1,5 +1,5 @@
 /**
- * Brownlee 1965, Statistical theory and methodology in science and engineering, 2nd edition, section 13.12: 21 days of a
+ * Brownlee 1965, Statistical theory and methodology in science and engineering, 2nd edition: 21 days of a
  * plant that oxidises ammonia. Columns: air flow, water temperature, acid concentration, stack loss.
  */
 export const STACK_LOSS = [
@@ -28,7 +28,7 @@ export const STACK_LOSS = [
 
 /**
  * Hawkins, Bradu & Kass 1984, Location of several outliers in multiple-regression data using elemental sets,
- * Technometrics 26, table 4: made up, cases 1–14 are outliers in X₁, X₂, X₃; cases 1–10 in Y as well.
+ * Technometrics 26, 197–208: made up, cases 1–14 are outliers in X₁, X₂, X₃; cases 1–10 in Y as well.
  */
 export const HAWKINS_BRADU_KASS = [
   [10.1, 19.6, 28.3],

@@ -153,6 +153,26 @@ test('an analyst explores, filters and shares a view that a viewer opens in the 
   expect(viewerErrors).toEqual([]);
 });
 
+test('an analyst shares a view with a role and takes it back', async ({ page }) => {
+  const errors = watch(page);
+  const base = await signIn(page, 'analyst');
+  await page.goto(`${base}/views`, { waitUntil: 'networkidle' });
+  await page.getByRole('button', { name: 'More for Autumn grouping, all members' }).click();
+  await page.getByRole('menuitem', { name: 'Share' }).click();
+  const dialog = page.getByRole('dialog', { name: 'Share “Autumn grouping, all members”' });
+  await expect(dialog).toBeVisible();
+  await dialog.getByRole('button', { name: /People and roles/ }).click();
+  await page.getByRole('option', { name: 'Moderators' }).click();
+  await dialog.getByRole('button', { name: 'Share', exact: true }).click();
+  await expect(dialog.getByRole('list', { name: 'Shared with' })).toContainText('Moderators can open');
+  await expectAccessible(page);
+  await dialog.getByRole('button', { name: 'Stop sharing with Moderators' }).click();
+  await expect(dialog.getByRole('list', { name: 'Shared with' })).toBeHidden();
+  await dialog.getByRole('button', { name: 'Done' }).click();
+  await expect(dialog).toBeHidden();
+  expect(errors).toEqual([]);
+});
+
 test('a moderator reads the evidence of a case and decides it with a reason', async ({ page }) => {
   const errors = watch(page);
   const base = await signIn(page, 'moderator');

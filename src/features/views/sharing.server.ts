@@ -3,17 +3,10 @@ import type { Actor, Role } from '@/lib/actor';
 import { forbidden, notFound, unprocessable } from '@/lib/problem';
 import { Membership, sequelize, ViewComment, ViewShare, type View } from '@/server/models';
 import { audit, type Access } from '@/features/workspaces/index.server';
+import { ROLE_PLURALS } from './role-plurals';
 import { viewFor } from './visible.server';
 import { namesOf } from './views.server';
 import type { Comment, newShareSchema, Share } from './views';
-
-const ROLE_NAMES = {
-  owner: 'Owners',
-  admin: 'Admins',
-  analyst: 'Analysts',
-  moderator: 'Moderators',
-  viewer: 'Viewers',
-} as const;
 
 async function sharableView(actor: Actor, id: string): Promise<{ view: View; access: Access }> {
   const found = await viewFor(actor, id);
@@ -29,7 +22,7 @@ async function presentShares(rows: readonly ViewShare[]): Promise<Share[]> {
     id: row.id,
     userId: row.userId,
     role: row.role,
-    name: row.role ? ROLE_NAMES[row.role as Role] : (names.get(row.userId!) ?? 'A former colleague'),
+    name: row.role ? ROLE_PLURALS[row.role as Role] : (names.get(row.userId!) ?? 'A former colleague'),
     canEdit: row.canEdit,
   }));
 }

@@ -1,15 +1,26 @@
+import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { useState } from 'react';
 import { ConfirmDialog, Menu, StatusBadge, toast } from '@/components/ui';
 import { ApiError, sendJson } from '@/lib/api';
 import { formatDate } from '@/lib/format';
 import type { SavedView } from '../views';
+import { ShareDialog, type Colleague } from './ShareDialog';
 
 const seen = (view: SavedView): string =>
-  view.visibility === 'workspace' ? 'everyone' : view.shares > 0 ? 'some' : 'only you';
+  view.visibility === 'workspace' ? 'everyone' : view.shares > 0 ? `${view.shares} named` : 'only you';
 
-/** Saved views as a table: open, pin, share with everyone, delete. */
-export function ViewsList({ initial }: { initial: SavedView[] }) {
+/** Saved views as a table: open, pin, share, delete. */
+export function ViewsList({
+  initial,
+  colleagues,
+}: {
+  initial: SavedView[];
+  colleagues: readonly Colleague[];
+}) {
+  const [client] = useState(() => new QueryClient());
   const [views, setViews] = useState(initial);
+  const [sharing, setSharing] = useState<string | null>(null);
+  const shared = views.find((one) => one.id === sharing);
   const [asking, setAsking] = useState<SavedView | null>(null);
   const change = async (view: SavedView, changes: Partial<SavedView>): Promise<void> => {
     try {
@@ -49,7 +60,7 @@ export function ViewsList({ initial }: { initial: SavedView[] }) {
               <td>{view.owner.name}</td>
               <td>{formatDate(view.updatedAt)}</td>
               <td>
-                {view.canEdit && (
+                {(view.canEdit || view.canShare) && (
                   <Menu
                     trigger="More"
                     look="quiet"
@@ -57,27 +68,20 @@ export function ViewsList({ initial }: { initial: SavedView[] }) {
                     placement="bottom end"
                     label={`More for ${view.name}`}
                     entries={[
-                      {
-                        id: 'pin',
-                        label: view.pinned ? 'Unpin' : 'Pin',
-                        onAction: () => void change(view, { pinned: !view.pinned }),
-                      },
-                      ...(view.mine
+                      ...(view.canEdit
                         ? [
                             {
-                              id: 'share',
-                              label:
-                                view.visibility === 'workspace' ? 'Keep to yourself' : 'Share with everyone',
-                              onAction: () =>
-                                void change(view, {
-                                  visibility:
-                                    view.visibility === 'workspace'
-                                      ? ('private' as const)
-                                      : ('workspace' as const),
-                                }),
+                              id: 'pin',
+                              label: view.pinned ? 'Unpin' : 'Pin',
+                              onAction: () => void change(view, { pinned: !view.pinned }),
                             },
-                            { id: 'delete', label: 'Delete', danger: true, onAction: () => setAsking(view) },
                           ]
+                        : []),
+                      ...(view.canShare
+                        ? [{ id: 'share', label: 'Share', onAction: () => setSharing(view.id) }]
+                        : []),
+                      ...(view.mine
+                        ? [{ id: 'delete', label: 'Delete', danger: true, onAction: () => setAsking(view) }]
                         : []),
                     ]}
                   />
@@ -87,6 +91,19 @@ export function ViewsList({ initial }: { initial: SavedView[] }) {
           ))}
         </tbody>
       </table>
+      {shared && (
+        <QueryClientProvider client={client}>
+          <ShareDialog
+            view={shared}
+            colleagues={colleagues}
+            onVisibility={(visibility) => change(shared, { visibility })}
+            onShares={(shares) =>
+              setViews((list) => list.map((one) => (one.id === shared.id ? { ...one, shares } : one)))
+            }
+            onClose={() => setSharing(null)}
+          />
+        </QueryClientProvider>
+      )}
       {asking && (
         <ConfirmDialog
           open

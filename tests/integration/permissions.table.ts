@@ -64,6 +64,8 @@ export const ENDPOINTS: Readonly<Record<string, WalkEndpoint>> = {
   'GET /snapshots/{snapshot}/network': see('explore.open'),
   'GET /snapshots/{snapshot}/spectrum': see('explore.open', () => ({ count: '2' })),
   'GET /snapshots/{snapshot}/ties.csv': see('export.tables'),
+  'GET /snapshots/{snapshot}/network.gexf': see('export.tables'),
+  'GET /snapshots/{snapshot}/network.graphml': see('export.tables'),
 
   'GET /jobs/{job}': see('explore.open'),
   // Only the person who started a job and admins stop it; the fixture's was started by the moderator.

@@ -1,4 +1,5 @@
 export { auditExport } from './audit.server';
+export { graphFile } from './graph-files.server';
 export { landSnapshot, type Landing } from './land.server';
 export { networkPicture, savePicture } from './picture.server';
 export { attributesOf, loadArray, loadAttribute, loadLabels, loadNetwork, saveArray } from './arrays.server';

@@ -13,31 +13,38 @@ interface Row {
   count: number;
 }
 
-/** Every tie as CSV, streamed; walked by key, so that the last page is as quick as the first. */
+/** Every tie in pages; walked by key, so that the last page is as quick as the first. */
+export async function* tiePages(snapshot: Snapshot, size = CHUNK): AsyncGenerator<Row[]> {
+  let last: [number, number] = [-1, -1];
+  for (;;) {
+    const rows = await sequelize.query<Row>(
+      `SELECT t.source, t.target, a.external_id AS "from", b.external_id AS "to", t.weight, t.kind, t.count FROM ties t
+       JOIN snapshot_members a ON a.snapshot_id = t.snapshot_id AND a.ordinal = t.source
+       JOIN snapshot_members b ON b.snapshot_id = t.snapshot_id AND b.ordinal = t.target
+       WHERE t.snapshot_id = $1 AND (t.source, t.target) > ($2, $3) ORDER BY t.source, t.target LIMIT $4`,
+      { bind: [snapshot.id, ...last, size], type: QueryTypes.SELECT },
+    );
+    if (rows.length > 0) yield rows;
+    const end = rows.at(-1);
+    if (!end || rows.length < size) return;
+    last = [end.source, end.target];
+  }
+}
+
+/** Every tie as CSV, streamed. */
 export function tiesCsv(snapshot: Snapshot): Response {
   const encoder = new TextEncoder();
-  let last: [number, number] = [-1, -1];
-  let first = true;
+  const pages = tiePages(snapshot);
   const body = new ReadableStream<Uint8Array>({
+    start: (controller) =>
+      controller.enqueue(encoder.encode(csvLine(['source', 'target', 'weight', 'kind', 'rows']))),
     async pull(controller) {
-      const rows = await sequelize.query<Row>(
-        `SELECT t.source, t.target, a.external_id AS "from", b.external_id AS "to", t.weight, t.kind, t.count FROM ties t
-         JOIN snapshot_members a ON a.snapshot_id = t.snapshot_id AND a.ordinal = t.source
-         JOIN snapshot_members b ON b.snapshot_id = t.snapshot_id AND b.ordinal = t.target
-         WHERE t.snapshot_id = $1 AND (t.source, t.target) > ($2, $3) ORDER BY t.source, t.target LIMIT $4`,
-        { bind: [snapshot.id, ...last, CHUNK], type: QueryTypes.SELECT },
-      );
-      const head = first ? csvLine(['source', 'target', 'weight', 'kind', 'rows']) : '';
-      first = false;
-      controller.enqueue(
-        encoder.encode(
-          head + rows.map((row) => csvLine([row.from, row.to, row.weight, row.kind, row.count])).join(''),
-        ),
-      );
-      const end = rows.at(-1);
-      if (end) last = [end.source, end.target];
-      if (rows.length < CHUNK) controller.close();
+      const { value, done } = await pages.next();
+      if (done) return controller.close();
+      const lines = value.map((row) => csvLine([row.from, row.to, row.weight, row.kind, row.count]));
+      controller.enqueue(encoder.encode(lines.join('')));
     },
+    cancel: async () => void (await pages.return(undefined)),
   });
   return new Response(body, {
     headers: {

@@ -92,6 +92,8 @@ export const ENDPOINTS: Readonly<Record<string, WalkEndpoint>> = {
   'GET /snapshots/{snapshot}/members/{member}': see('explore.open'),
   'GET /snapshots/{snapshot}/members.csv': see('export.tables'),
   'GET /snapshots/{snapshot}/members.jsonl': see('export.tables'),
+  'GET /snapshots/{snapshot}/members.xlsx': see('export.tables'),
+  'GET /snapshots/{snapshot}/members.parquet': see('export.tables'),
   'GET /snapshots/{snapshot}/values': see('explore.open', () => ({ field: 'degree' })),
   'GET /snapshots/{snapshot}/handles': see('explore.open'),
   'GET /snapshots/{snapshot}/matching': see('explore.open', () => ({ filter: '[]' })),

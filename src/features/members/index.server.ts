@@ -1,5 +1,5 @@
 export { matchingMembers, memberColumn, memberHandles } from './columns.server';
 export { memberCode } from './codes.server';
-export { exportMembers } from './export.server';
+export { exportMembers } from './export/export.server';
 export { memberDetail } from './detail.server';
 export { memberRows } from './rows.server';

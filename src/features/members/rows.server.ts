@@ -134,12 +134,12 @@ const selectRows = (
 
 const CHUNK = 5_000;
 
-/** All rows of a query, chunk by chunk, with the titles of its columns: for exports. */
+/** All rows of a query, chunk by chunk, with what its columns are called and hold: for exports. */
 export async function allMemberRows(
   actor: Actor,
   shared: SharedSnapshot,
   query: MembersQuery,
-): Promise<{ titles: string[]; chunks: AsyncGenerator<MemberRow[]> }> {
+): Promise<{ columns: { title: string; label: boolean }[]; chunks: AsyncGenerator<MemberRow[]> }> {
   const { fields, from, order, binds } = await plan(shared, query);
   const present = presenter(actor, shared, query, fields, await maskedGroups(shared, query.columns));
   async function* chunks(): AsyncGenerator<MemberRow[]> {
@@ -149,5 +149,11 @@ export async function allMemberRows(
       if (rows.length < CHUNK) return;
     }
   }
-  return { titles: query.columns.map((column) => fields.get(column)!.title), chunks: chunks() };
+  return {
+    columns: query.columns.map((column) => {
+      const { title, label } = fields.get(column)!;
+      return { title, label };
+    }),
+    chunks: chunks(),
+  };
 }

@@ -1,3 +1,4 @@
+import { components } from '../network';
 import { ShiftedSystems } from '../solvers';
 import { median } from '../statistics';
 import type { LaplacianKind, Watch } from '../types';
@@ -86,12 +87,20 @@ function spreadOf({ y, s }: Problem): number {
   return Math.sqrt(y.reduce((total, one, i) => total + s[i]! * (one - mean) ** 2, 0) / count);
 }
 
-/** Members that the next round leaves out; never all of a component or of a small problem. */
-function wild(z: Float64Array, observed: Uint8Array): Uint8Array {
+/** Members that the next round leaves out; never most of a small problem, nor all that a component has. */
+function wild({ l, observed }: Problem, z: Float64Array): Uint8Array {
   const out = Uint8Array.from(z, (one) => (Math.abs(one) > WILD ? 1 : 0));
   const count = out.reduce((sum, one) => sum + one, 0);
   const all = observed.reduce((sum, one) => sum + one, 0);
-  return count > 0.2 * all ? new Uint8Array(z.length) : out;
+  if (count === 0 || count > 0.2 * all) return new Uint8Array(z.length);
+  // The regularised Laplacian ties everybody to everybody.
+  if (l.kind === 'regularised') return out;
+  const { labels, count: parts } = components(l.network);
+  const left = new Uint8Array(parts);
+  observed.forEach((one, i) => {
+    if (one === 1 && out[i] === 0) left[labels[i]!] = 1;
+  });
+  return out.map((one, i) => (left[labels[i]!] === 1 ? one : 0));
 }
 
 const rangeFor = (kind: LaplacianKind, strength: Strength['kind']): [number, number] =>
@@ -194,7 +203,7 @@ function smoothExactly(
     watch?.progress?.(0.7 + 0.05 * round, 'Setting wild scores aside');
     const system = new ExactSystem(problem, basis, zeroed);
     const fit = system.fit(choose(system));
-    const next = wild(standardise(problem, fit, zeroed).z, problem.observed);
+    const next = wild(problem, standardise(problem, fit, zeroed).z);
     const same = next.every((one, i) => one === zeroed[i]);
     zeroed = next;
     if (same) break;
@@ -240,7 +249,7 @@ function smoothBySolving(
     strength.kind === 'restricted-likelihood' ? [-1.5, 4] : rangeFor(problem.l.kind, strength.kind);
   let zeroed: Uint8Array = new Uint8Array(problem.l.n);
   let end: 'low' | 'high' | null = null;
-  const choose = (system: LargeSystem, near?: number): number => {
+  const choose = (system: LargeSystem, within?: readonly [number, number]): number => {
     if (strength.kind === 'given') return strength.alpha;
     const folds = strength.kind === 'hold-out' ? new HoldOut(problem, seed, systems, watch) : null;
     const found: Found = folds
@@ -249,12 +258,12 @@ function smoothBySolving(
         ? coarseMinimum((alpha) => system.crossValidation(alpha), low, high, watch)
         : rootOf(
             (alpha) => system.score(alpha),
-            near === undefined ? low : Math.max(low, near - 1),
-            near === undefined ? high : Math.min(high, near + 1),
+            within ? Math.max(low, within[0]) : low,
+            within ? Math.min(high, within[1]) : high,
             watch,
           );
     // Only the first search reaches far enough to compare with no variation at all.
-    if (near === undefined) end = found.flat === true ? 'high' : found.end;
+    if (!within) end = found.flat === true ? 'high' : found.end;
     else end = found.end ?? end;
     return found.alpha;
   };
@@ -262,13 +271,16 @@ function smoothBySolving(
   for (let round = 0; robust && round < ROUNDS; round++) {
     watch?.progress?.(0.5 + 0.05 * round, 'Setting wild scores aside');
     const fit = new LargeSystem(problem, zeroed, seed, systems, watch).fit(alpha, true);
-    const next = wild(standardise(problem, fit, zeroed).z, problem.observed);
+    const next = wild(problem, standardise(problem, fit, zeroed).z);
     const same = next.every((one, i) => one === zeroed[i]);
     zeroed = next;
-    // The strength moves most when the wild scores first go.
-    if (round === 0)
-      alpha = choose(new LargeSystem(problem, zeroed, seed, systems, watch), Math.log10(alpha));
     if (same) break;
+    // The strength moves most when the wild scores first go, and mostly up, as they had looked like variation.
+    const near = Math.log10(alpha);
+    alpha = choose(
+      new LargeSystem(problem, zeroed, seed, systems, watch),
+      round === 0 ? [near - 1, near + 2.5] : [near - 0.5, near + 0.5],
+    );
   }
   let fit = new LargeSystem(problem, zeroed, seed, systems, watch).fit(alpha);
   let first = standardise(problem, fit, zeroed);
@@ -301,13 +313,13 @@ interface Found {
 
 /**
  * Minimum of a criterion of which only the derivative by log α is known, with some noise: the derivative is summed
- * up over about decades, the penalty included, and the lowest point is refined by bisection to 7 %.
+ * up over half decades, the penalty included, and the lowest point is refined by bisection to 7 %.
  */
 function rootOf(score: (alpha: number) => number, low: number, high: number, watch?: Watch): Found {
   const places: number[] = [];
   const slopes: number[] = [];
   const penalised = (alpha: number): number => score(alpha) + boundarySlope(alpha);
-  const step = high - low > 2.5 ? (high - low) / 6 : (high - low) / 2;
+  const step = (high - low) / Math.max(2, Math.round(2 * (high - low)));
   for (let place = low; place <= high + 1e-9; place += step) {
     watch?.progress?.(
       (0.4 * (place - low)) / (high - low),

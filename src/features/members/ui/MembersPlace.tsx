@@ -32,6 +32,7 @@ export function MembersPlace(props: ExploreProps) {
   const total = rows.data?.pages[0]?.total ?? props.snapshot.members;
   const items = rows.data?.pages.flatMap((page) => page.items) ?? [];
   const exportHref = (format: string): string => `${url}.${format}?${membersQuery(props, state)}`;
+  const networkHref = (format: string): string => `/api/v1/snapshots/${props.snapshot.id}/network.${format}`;
   return (
     <div className="mem">
       <div className="hd1">
@@ -47,8 +48,28 @@ export function MembersPlace(props: ExploreProps) {
             icon="download"
             placement="bottom end"
             entries={[
-              { id: 'csv', label: 'CSV', description: 'For spreadsheets', href: exportHref('csv') },
+              { id: 'csv', label: 'CSV', description: 'For any spreadsheet', href: exportHref('csv') },
+              {
+                id: 'xlsx',
+                label: 'Workbook (XLSX)',
+                description: 'Numbers stay numbers',
+                href: exportHref('xlsx'),
+              },
               { id: 'jsonl', label: 'JSON Lines', description: 'For programs', href: exportHref('jsonl') },
+              { id: 'parquet', label: 'Parquet', description: 'For data tools', href: exportHref('parquet') },
+              'separator',
+              {
+                id: 'gexf',
+                label: 'Network as GEXF',
+                description: 'All members and ties',
+                href: networkHref('gexf'),
+              },
+              {
+                id: 'graphml',
+                label: 'Network as GraphML',
+                description: 'All members and ties',
+                href: networkHref('graphml'),
+              },
             ]}
           />
         )}

@@ -2,6 +2,7 @@ import { spectrum, type Spectrum } from '../eigen';
 import { componentMembers, components, subnetwork } from '../network';
 import { createRandom } from '../random';
 import { UnanswerableError, type LaplacianKind, type Network, type Watch } from '../types';
+import { followBranches } from './branches';
 import { kMeans } from './kmeans';
 import { mergeSmall, renumber } from './merge';
 
@@ -40,7 +41,7 @@ const mostGroups = 64;
 
 /**
  * k-way spectral grouping (Ng, Jordan & Weiss 2001): rows of the first k eigenvectors scaled to unit length,
- * then k-means. Components below the smallest size are not grouped but kept as islets; the others are grouped together.
+ * then k-means; small branches follow the member they hang on. Components below the smallest size are not grouped but kept as islets; the others are grouped together.
  *
  * @throws UnanswerableError `no-ties`; `too-small` when there are fewer members in scope than groups asked for
  */
@@ -82,7 +83,8 @@ export function spectralGrouping(net: Network, options: SpectralOptions, watch?:
   const solution = spectrum(part, { laplacian, tau, count: k, tolerance, seed }, watch);
   watch?.progress?.(0.95, 'k-means');
   const found = kMeans(embedding(solution, part.n, k), k, k, createRandom(seed));
-  const merged = mergeSmall(part, found.labels, Math.min(smallest, Math.floor(part.n / 2)));
+  const least = Math.min(smallest, Math.floor(part.n / 2));
+  const merged = mergeSmall(part, followBranches(part, found.labels, least), least);
   const ordered = renumber(merged);
   const groups = ordered.reduce((most, label) => Math.max(most, label + 1), 0);
   const labels = new Int32Array(net.n).fill(-1);

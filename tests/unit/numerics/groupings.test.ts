@@ -4,6 +4,7 @@ import {
   agreement,
   boundaryMembers,
   components,
+  createRandom,
   describeGroups,
   fiedlerGrouping,
   mergeSmall,
@@ -12,6 +13,7 @@ import {
   spectralLayout,
   UnanswerableError,
 } from '@/numerics';
+import { followBranches } from '@/numerics/groupings/branches';
 import { barbell, fromTies, path, planted, star } from './networks';
 
 describe('fiedlerGrouping', () => {
@@ -240,5 +242,63 @@ describe('spectralLayout', () => {
       const { x, y } = spectralLayout(net);
       expect([...x, ...y].every(Number.isFinite)).toBe(true);
     }
+  });
+});
+
+describe('followBranches', () => {
+  /** A ring of six (0–5), a chain 0–6–7, a leaf 8 on 3, and a longer chain 9–10–11 on 5. */
+  const net = fromTies(12, [
+    [0, 1],
+    [1, 2],
+    [2, 3],
+    [3, 4],
+    [4, 5],
+    [5, 0],
+    [0, 6],
+    [6, 7],
+    [3, 8],
+    [5, 9],
+    [9, 10],
+    [10, 11],
+  ]);
+  const labels = Int32Array.of(0, 0, 0, 1, 1, 1, 1, 2, 0, 0, 0, 0);
+
+  it('puts small trees where they hang, and leaves large ones and the core alone', () => {
+    expect([...followBranches(net, labels, 3)]).toEqual([0, 0, 0, 1, 1, 1, 0, 0, 1, 0, 0, 0]);
+    expect([...followBranches(net, labels, 4)]).toEqual([0, 0, 0, 1, 1, 1, 0, 0, 1, 1, 1, 1]);
+    expect([...followBranches(net, labels, 1)]).toEqual([...labels]);
+  });
+
+  it('leaves a component that is a tree alone', () => {
+    const line = Int32Array.from({ length: 9 }, (_, i) => (i < 4 ? 0 : 1));
+    expect([...followBranches(path(9), line, 5)]).toEqual([...line]);
+    expect([...followBranches(star(9), line, 5)]).toEqual([...line]);
+    expect([...followBranches(fromTies(3, []), Int32Array.of(0, 1, 2), 5)]).toEqual([0, 1, 2]);
+  });
+
+  it('never raises the weight of the ties that are cut', () => {
+    fc.assert(
+      fc.property(fc.integer({ min: 1, max: 10_000 }), (seed) => {
+        const random = createRandom(seed);
+        const ties = Array.from({ length: 70 }, (): [number, number] => [
+          random.int(40),
+          random.int(40),
+        ]).filter(([a, b]) => a !== b);
+        const grown = fromTies(60, [
+          ...ties,
+          ...Array.from({ length: 20 }, (_, i): [number, number] => [40 + i, random.int(40 + i)]),
+        ]);
+        const given = Int32Array.from({ length: 60 }, () => random.int(3));
+        const cut = (of: Int32Array): number => {
+          let sum = 0;
+          for (let i = 0; i < 60; i++)
+            for (let p = grown.offsets[i]!; p < grown.offsets[i + 1]!; p++)
+              if (of[i] !== of[grown.targets[p]!]) sum += grown.weights[p]!;
+          return sum;
+        };
+        expect(cut(followBranches(grown, given, 8))).toBeLessThanOrEqual(cut(given));
+      }),
+      { numRuns: 200 },
+    );
   });
 });

@@ -16,14 +16,15 @@ export function followBranches(net: Network, labels: Int32Array, largest: number
   const peeled = Array.from(left.keys()).filter((i) => left[i] === 1);
   for (const i of peeled) {
     // The last of a component that is a tree has nobody left to hang on.
-    if (left[i] !== 1) continue;
+    if (left[i] === 0) continue;
     left[i] = 0;
     for (let p = offsets[i]!; p < offsets[i + 1]!; p++) {
       const j = targets[p]!;
-      if (left[j]! === 0) continue;
+      if (left[j] === 0) continue;
       hangsOn[i] = j;
       sizes[j]! += sizes[i]!;
-      if (--left[j]! === 1) peeled.push(j);
+      left[j]!--;
+      if (left[j] === 1) peeled.push(j);
       break;
     }
   }

@@ -1,6 +1,7 @@
 import {
   describeGroups,
   fiedlerGrouping,
+  refineByNeighbours,
   spectralGrouping,
   UnanswerableError,
   type LaplacianKind,
@@ -213,7 +214,8 @@ export function computeSmootherGroups(
     );
     // A small component has its own constant already; a level beside it would say the same twice.
     const alone = new Set(islets);
-    return labels.map((label) => (alone.has(label) ? -1 : label));
+    const levels = labels.map((label) => (alone.has(label) ? -1 : label));
+    return refineByNeighbours(net, levels);
   } catch (error) {
     if (k === null && error instanceof UnanswerableError) return new Int32Array(net.n);
     throw error;

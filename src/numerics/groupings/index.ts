@@ -5,6 +5,7 @@ export { kMeans, type KMeans } from './kmeans';
 export { eigengaps, spectralGrouping, type SpectralGrouping, type SpectralOptions } from './kway';
 export { spectralLayout, type Layout } from './layout';
 export { mergeSmall, renumber } from './merge';
+export { refineByNeighbours } from './refine';
 export {
   boundaryMembers,
   describeGroups,

@@ -157,7 +157,8 @@ test('an analyst shares a view with a role and takes it back', async ({ page }) 
   const errors = watch(page);
   const base = await signIn(page, 'analyst');
   await page.goto(`${base}/views`, { waitUntil: 'networkidle' });
-  await page.getByRole('button', { name: 'More for Autumn grouping, all members' }).click();
+  const row = page.getByRole('row', { name: /Autumn grouping/ });
+  await row.getByRole('button', { name: 'More' }).click();
   await page.getByRole('menuitem', { name: 'Share' }).click();
   const dialog = page.getByRole('dialog', { name: 'Share “Autumn grouping, all members”' });
   await expect(dialog).toBeVisible();

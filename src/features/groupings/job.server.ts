@@ -95,6 +95,8 @@ export const groupingJob: JobHandler = async ({ targetId, signal, progress }) =>
   };
   progress(0.95, 'Saving');
   await sequelize.transaction(async (transaction) => {
+    // Another run of this job waits here, and then replaces the rows instead of colliding with them.
+    await grouping.reload({ transaction, lock: transaction.LOCK.UPDATE });
     await saveMembers(targetId, labels, vector, transaction);
     const k = groups.filter((group) => !group.islet).length;
     await grouping.update(

@@ -1,6 +1,6 @@
 import { QueryTypes, type Transaction } from 'sequelize';
 import { deleteObject, getObject } from '@/server/storage';
-import { Import, sequelize, Snapshot } from '@/server/models';
+import { Import, sequelize, Snapshot, type JobResult } from '@/server/models';
 import type { JobContext, JobHandler } from '@/server/queue';
 import { runInThread } from '@/server/threads/run-in-thread';
 import { audit } from '@/features/workspaces/index.server';
@@ -126,17 +126,36 @@ export const dropFiles = async (row: Import): Promise<void> => {
 
 const today = (): string => new Date().toISOString().slice(0, 10);
 
+/** What an import has made already: by a run that was interrupted after its commit, or by another run of the job. */
+async function madeBefore(importId: string): Promise<JobResult | null> {
+  const row = await Import.findByPk(importId);
+  if (!row?.snapshotId) return null;
+  await dropFiles(row);
+  return row.state === 'review'
+    ? { kind: 'import', id: row.id, href: `/api/v1/imports/${row.id}` }
+    : { kind: 'snapshot', id: row.snapshotId, href: `/api/v1/snapshots/${row.snapshotId}` };
+}
+
 /** Turns the uploaded files into a snapshot, whole or not at all; run again it starts from a clean slate. */
 export const importJob: JobHandler = async (context) => {
+  const before = await madeBefore(context.targetId);
+  if (before) return before;
+  try {
+    await makeSnapshot(context);
+  } catch (error) {
+    // One snapshot an import: a run that comes second fails on it, or on files that are gone, and is done all the same.
+    const made = await madeBefore(context.targetId);
+    if (made) return made;
+    throw error;
+  }
+  return madeBefore(context.targetId);
+};
+
+async function makeSnapshot(context: JobContext): Promise<void> {
   const row = await Import.findByPk(context.targetId);
-  if (!row || row.state === 'discarded') return null;
-  const result = (snapshotId: string, review: boolean) =>
-    review
-      ? { kind: 'import', id: row.id, href: `/api/v1/imports/${row.id}` }
-      : { kind: 'snapshot', id: snapshotId, href: `/api/v1/snapshots/${snapshotId}` };
-  if (row.snapshotId) return result(row.snapshotId, row.state === 'review');
+  if (!row || row.state === 'discarded') return;
   await clear(row.id);
-  await row.update({ state: 'checking' });
+  await Import.update({ state: 'checking' }, { where: { id: row.id, state: 'received' } });
   const options = importOptionsSchema.parse(row.options);
   const takenOn = options.takenOn ?? today();
   const files = await readFiles(row, options, takenOn, context);
@@ -171,7 +190,7 @@ export const importJob: JobHandler = async (context) => {
     notes: [...files.notes, ...(files.members?.notes ?? [])],
   });
   const review = options.accept === 'review';
-  const snapshot = await sequelize.transaction(async (transaction) => {
+  await sequelize.transaction(async (transaction) => {
     const landed = await landSnapshot(
       {
         workspaceId: row.workspaceId,
@@ -216,13 +235,10 @@ export const importJob: JobHandler = async (context) => {
       },
       transaction,
     );
-    return landed;
   });
   // The planner has never seen these rows; without this its first guesses are poor.
   await sequelize.query('ANALYZE snapshot_members, ties, attribute_values').catch(() => undefined);
-  await dropFiles(row);
-  return result(snapshot.id, review);
-};
+}
 
 /** Marks an import whose job ended without a snapshot; keeps its problems, removes its files. */
 export async function importEnded(importId: string, state: 'failed' | 'cancelled'): Promise<void> {

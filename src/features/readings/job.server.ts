@@ -61,6 +61,8 @@ export const readingJob: JobHandler = async ({ targetId, signal, progress }) => 
   });
   progress(0.95, 'Saving');
   await sequelize.transaction(async (transaction) => {
+    // Another run of this job waits here, and then replaces the rows instead of colliding with them.
+    await reading.reload({ transaction, lock: transaction.LOCK.UPDATE });
     await saveMembers(targetId, columns, transaction);
     const seconds = (Date.now() - started) / 1000;
     await reading.update(

@@ -1,4 +1,4 @@
-import { ConnectionError, DatabaseError } from 'sequelize';
+import { ConnectionError, DatabaseError, type InferAttributes, type WhereOptions } from 'sequelize';
 import { ProblemError, type ProblemDocument } from '@/lib/problem';
 import { log } from '../log';
 import { Job } from '../models';
@@ -36,15 +36,39 @@ function problemOf(error: unknown, jobId: string): ProblemDocument {
   };
 }
 
+/** The job belongs to another run by now: this one must change nothing any more. */
+class SupersededError extends Error {
+  override readonly name = 'SupersededError';
+}
+
+/**
+ * The row of a job as this run left it. Changes it only while it is this run's: a worker that slept through its lease
+ * finds its job taken over when it wakes, maybe by itself.
+ */
+const ownRow = (job: Job): WhereOptions<InferAttributes<Job>> => ({
+  id: job.id,
+  workerId: job.workerId,
+  attempts: job.attempts,
+  state: 'running',
+});
+
+async function update(job: Job, values: Partial<InferAttributes<Job>>): Promise<void> {
+  const [count] = await Job.update(values, { where: ownRow(job) });
+  // Thrown, not returned: a run that ends well takes the entry out of the queue, which the other run still needs.
+  if (count === 0) throw new SupersededError(`Job ${job.id} was given to another run.`);
+}
+
 async function settle(
   job: Job,
   kind: JobKind,
   state: 'failed' | 'cancelled',
   error: ProblemDocument,
 ): Promise<void> {
+  // Before the target is touched, too.
+  await update(job, { heartbeatAt: new Date() });
   const ended = await kind.ended?.();
   await ended?.(job.targetId, state);
-  await job.update({ state, error, finishedAt: new Date(), workerId: null });
+  await update(job, { state, error, finishedAt: new Date(), workerId: null });
 }
 
 /**
@@ -61,7 +85,6 @@ export async function runJob(
   if (!job || job.state === 'succeeded' || job.state === 'failed' || job.state === 'cancelled') return;
   const kind = registry[job.kind];
   if (!kind) throw new Error(`No handler for jobs of kind ${job.kind}`);
-  if (job.cancelRequested) return settle(job, kind, 'cancelled', cancelled);
   await job.update({
     state: 'running',
     workerId,
@@ -71,6 +94,7 @@ export async function runJob(
     progress: 0,
     step: 'Starting',
   });
+  if (job.cancelRequested) return settle(job, kind, 'cancelled', cancelled);
 
   const stop = new AbortController();
   const onStopping = (): void => stop.abort('worker-stopping');
@@ -80,15 +104,15 @@ export async function runJob(
   const beat = setInterval(() => {
     const report = latest;
     latest = null;
-    void Job.update(
-      { ...report, heartbeatAt: new Date() },
-      { where: { id: jobId, workerId, state: 'running' } },
-    )
+    void update(job, { ...report, heartbeatAt: new Date() })
       .then(() => Job.findByPk(jobId, { attributes: ['cancelRequested'] }))
       .then((row) => {
         if (!row || row.cancelRequested) stop.abort('cancelled');
       })
-      .catch((error: unknown) => log.warn({ jobId, err: error }, 'heartbeat missed'));
+      .catch((error: unknown) => {
+        if (error instanceof SupersededError) stop.abort('superseded');
+        else log.warn({ jobId, err: error }, 'heartbeat missed');
+      });
   }, REPORT_EVERY);
   const context: JobContext = {
     jobId,
@@ -105,7 +129,7 @@ export async function runJob(
     const handler = await kind.load();
     const result = await handler(context);
     clearInterval(beat);
-    await job.update({
+    await update(job, {
       state: 'succeeded',
       progress: 1,
       step: 'Done',
@@ -118,10 +142,11 @@ export async function runJob(
     clearInterval(beat);
     if (stop.signal.aborted && stop.signal.reason === 'cancelled')
       return await settle(job, kind, 'cancelled', cancelled);
+    if (error instanceof SupersededError || stop.signal.reason === 'superseded') throw error;
     if (isOutage(error) || (stop.signal.aborted && stop.signal.reason === 'worker-stopping')) {
-      await job
-        .update({ state: 'queued', step: 'Waiting to try again', workerId: null })
-        .catch(() => undefined);
+      await update(job, { state: 'queued', step: 'Waiting to try again', workerId: null }).catch(
+        () => undefined,
+      );
       throw error;
     }
     if (!(error instanceof ProblemError)) log.error({ jobId, err: error }, 'job failed');

@@ -1,9 +1,10 @@
 import { randomUUID } from 'node:crypto';
 import { Logger, run, type Runner } from 'graphile-worker';
 import { QueryTypes } from 'sequelize';
+import type { ProblemDocument } from '@/lib/problem';
 import { config } from '../config';
 import { log } from '../log';
-import { sequelize, WorkerProcess } from '../models';
+import { Job, sequelize, WorkerProcess } from '../models';
 import type { JobRegistry } from './context';
 import { runJob } from './run-job';
 
@@ -16,10 +17,38 @@ const quietLogger = new Logger(() => (level, message) => {
   if (level === 'error' || level === 'warning') log.warn({ queue: message }, 'queue');
 });
 
-/** Gives jobs of dead workers back to the queue, and marks jobs that have used up their attempts. */
-export async function sweep(): Promise<void> {
-  const lost = await sequelize.query<{ id: string; worker_id: string }>(
-    `SELECT id, worker_id FROM jobs WHERE state = 'running' AND heartbeat_at < now() - make_interval(secs => $1)`,
+const givenUp: ProblemDocument = {
+  type: 'urn:thrum:problem:given-up',
+  title: 'This could not be finished.',
+  status: 500,
+  detail: 'Its worker stopped several times. Nothing was kept; try again.',
+};
+
+/** Ends jobs that have used up their attempts, and marks their targets, so that a person can try again. */
+async function giveUp(registry: JobRegistry): Promise<void> {
+  const spent = await sequelize.query<{ id: string; kind: string; target_id: string }>(
+    `SELECT id, kind, target_id FROM jobs WHERE state = 'queued' AND attempts >= 5 AND NOT EXISTS (
+       SELECT 1 FROM graphile_worker._private_jobs q WHERE q.key = jobs.id::text AND q.attempts < q.max_attempts)`,
+    { type: QueryTypes.SELECT },
+  );
+  for (const job of spent) {
+    const ended = await registry[job.kind]?.ended?.();
+    await ended?.(job.target_id, 'failed');
+    await Job.update(
+      { state: 'failed', finishedAt: new Date(), workerId: null, error: givenUp },
+      { where: { id: job.id, state: 'queued' } },
+    );
+  }
+}
+
+/** Gives jobs of dead workers back to the queue, and ends jobs that have used up their attempts. */
+export async function sweep(registry: JobRegistry): Promise<void> {
+  // Also those leased by a worker that died before it marked them as running, or after it gave them up.
+  const lost = await sequelize.query<{ id: string }>(
+    `SELECT id FROM jobs WHERE state = 'running' AND heartbeat_at < now() - make_interval(secs => $1)
+     UNION ALL
+     SELECT jobs.id FROM jobs JOIN graphile_worker._private_jobs q ON q.key = jobs.id::text
+     WHERE jobs.state = 'queued' AND q.locked_at < now() - make_interval(secs => $1)`,
     { bind: [LOST_AFTER_SECONDS], type: QueryTypes.SELECT },
   );
   for (const job of lost) {
@@ -33,13 +62,7 @@ export async function sweep(): Promise<void> {
     );
     log.warn({ jobId: job.id }, 'a job lost its worker and goes back to the queue');
   }
-  await sequelize.query(
-    `UPDATE jobs SET state = 'failed', finished_at = now(), worker_id = NULL, error = jsonb_build_object(
-       'type', 'urn:thrum:problem:given-up', 'title', 'This could not be finished.', 'status', 500,
-       'detail', 'Its worker stopped several times. Nothing was kept; try again.')
-     WHERE state = 'queued' AND attempts >= 5 AND NOT EXISTS (
-       SELECT 1 FROM graphile_worker._private_jobs q WHERE q.key = jobs.id::text AND q.attempts < q.max_attempts)`,
-  );
+  await giveUp(registry);
 }
 
 /**
@@ -69,7 +92,7 @@ export async function startWorker(
   });
   const beat = async (): Promise<void> => {
     await WorkerProcess.upsert({ id: workerId, heartbeatAt: new Date() });
-    await sweep();
+    await sweep(registry);
   };
   await beat();
   const timer = setInterval(

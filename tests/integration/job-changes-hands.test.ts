@@ -114,5 +114,8 @@ test('a job out of attempts fails with a reason, and the same upload can be sent
   expect(given).toMatchObject({ state: 'failed', error: { title: 'This could not be finished.' } });
   expect((await models.Import.findByPk(given.targetId))!.state).toBe('failed');
   expect(await listObjects('imports/')).toEqual([]);
-  expect(await beginImport(world.actor, world.communityId, unlucky)).not.toBe(job);
+  const again = await beginImport(world.actor, world.communityId, unlucky);
+  expect(again).not.toBe(job);
+  expect((await runQueued(again)).state).toBe('succeeded');
+  expect(await listObjects('imports/')).toEqual([]);
 });

@@ -1,14 +1,12 @@
-import { chmodSync, mkdtempSync, readFileSync, readdirSync, rmSync } from 'node:fs';
+import { chmodSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { ensurePostgres } from '../../db/postgres/index.mjs';
 import { migrate } from '../../db/migrate';
 import type { Actor } from '@/lib/actor';
-import { ensureBucket } from '@/server/storage';
-import { makeCommunity } from '../factories/imports';
+import { settleCommunity } from '../factories/community-world';
 import { largeFiles } from '../factories/large-files';
-import { actorOf } from './call';
 import {
   beginImport,
   beginReading,
@@ -40,13 +38,9 @@ function crash(): void {
 beforeAll(async () => {
   chmodSync(folder, 0o711);
   postgres = await ensurePostgres({ dataDir: folder });
-  expect(readdirSync(folder)).toContain('postgres');
   process.env.DATABASE_URL = postgres.url;
   await migrate(postgres.url);
-  await ensureBucket();
-  const made = await makeCommunity();
-  communityId = made.communityId;
-  actor = actorOf('analyst', made.workspaceId, 'analyst');
+  ({ actor, communityId } = await settleCommunity());
   worker = RealWorker.start(true);
 }, 60_000);
 

@@ -8,13 +8,12 @@ import graphml from 'graphology-graphml';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import type { Actor } from '@/lib/actor';
 import { escapeXml } from '@/features/network/graph-files';
-import { ensureBucket } from '@/server/storage';
-import { makeCommunity, runQueued, upload } from '../factories/imports';
-import { actorOf, call } from './call';
-import { createTestDatabase, type TestDatabase } from './database';
+import { makeCommunityWorld, settleCommunity, type CommunityWorld } from '../factories/community-world';
+import { runQueued, upload } from '../factories/imports';
+import { call } from './call';
 
 /** Read back by independent readers: graphology's, and networkx where it is present (Debian's python3-networkx). */
-let database: TestDatabase;
+let world: CommunityWorld;
 let actor: Actor;
 let texts: { gexf: string; graphml: string };
 
@@ -23,11 +22,9 @@ const members =
   'id,name,score,town\nann,Ann,1.25,Ely\nbob,"Bob ""B"" & <Co>",-3,\n"c<&>""é",,,Över\ndora,D,0.1,Ely\n';
 
 beforeAll(async () => {
-  database = await createTestDatabase();
-  await ensureBucket();
-  const { workspaceId, communityId } = await makeCommunity();
-  actor = actorOf('analyst', workspaceId, 'analyst');
-  const { job } = (await (await upload(actor, communityId, { ties, members })).json()) as {
+  world = await makeCommunityWorld();
+  actor = world.actor;
+  const { job } = (await (await upload(actor, world.communityId, { ties, members })).json()) as {
     job: { id: string };
   };
   const snapshot = (await runQueued(job.id)).result!.id;
@@ -38,11 +35,7 @@ beforeAll(async () => {
     graphml: await (await call(getGraphml, { actor, params: { snapshot } })).text(),
   };
 });
-afterAll(async () => {
-  const { sequelize } = await import('@/server/models');
-  await sequelize.close();
-  await database.drop();
-});
+afterAll(() => world.close());
 
 const WEIGHTS = [
   ['ann', 'bob', 1.5],
@@ -102,8 +95,7 @@ print(json.dumps({
 });
 
 test('the karate club of Zachary (1977) comes back with its 78 ties', async () => {
-  const { communityId, workspaceId } = await makeCommunity();
-  const own = actorOf('analyst', workspaceId, 'analyst');
+  const { actor: own, communityId } = await settleCommunity();
   const file = readFileSync('tests/reference/data/karate/edges.csv', 'utf8');
   const { job } = (await (await upload(own, communityId, { ties: file })).json()) as { job: { id: string } };
   const snapshot = (await runQueued(job.id)).result!.id;

@@ -4,27 +4,20 @@ import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import type { ImportView } from '@/features/imports';
 import type { JobView } from '@/features/jobs';
 import type { Actor } from '@/lib/actor';
-import { ensureBucket, listObjects } from '@/server/storage';
-import { makeCommunity, runQueued, upload, type UploadFiles } from '../factories/imports';
-import { actorOf, call } from './call';
-import { createTestDatabase, type TestDatabase } from './database';
+import { listObjects } from '@/server/storage';
+import { makeCommunityWorld, type CommunityWorld } from '../factories/community-world';
+import { runQueued, upload, type UploadFiles } from '../factories/imports';
+import { call } from './call';
 
-let database: TestDatabase;
+let world: CommunityWorld;
 let actor: Actor;
 let communityId: string;
 
 beforeAll(async () => {
-  database = await createTestDatabase();
-  await ensureBucket();
-  const made = await makeCommunity();
-  communityId = made.communityId;
-  actor = actorOf('analyst', made.workspaceId, 'analyst');
+  world = await makeCommunityWorld();
+  ({ actor, communityId } = world);
 });
-afterAll(async () => {
-  const { sequelize } = await import('@/server/models');
-  await sequelize.close();
-  await database.drop();
-});
+afterAll(() => world.close());
 
 interface Outcome {
   readonly status: number;

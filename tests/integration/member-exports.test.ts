@@ -4,13 +4,12 @@ import Papa from 'papaparse';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import type { APIRoute } from 'astro';
 import type { Actor } from '@/lib/actor';
-import { ensureBucket } from '@/server/storage';
-import { makeCommunity, runQueued, upload } from '../factories/imports';
-import { actorOf, call } from './call';
-import { createTestDatabase, type TestDatabase } from './database';
+import { makeCommunityWorld, type CommunityWorld } from '../factories/community-world';
+import { runQueued, upload } from '../factories/imports';
+import { call } from './call';
 
 /** Every format read back by an independent reader: papaparse, JSON.parse, exceljs, hyparquet. */
-let database: TestDatabase;
+let world: CommunityWorld;
 let actor: Actor;
 let snapshot: string;
 let columns: string;
@@ -24,11 +23,9 @@ const EXPECTED = [
 ];
 
 beforeAll(async () => {
-  database = await createTestDatabase();
-  await ensureBucket();
-  const { workspaceId, communityId } = await makeCommunity();
-  actor = actorOf('analyst', workspaceId, 'analyst');
-  const response = await upload(actor, communityId, { ties: TIES, members: MEMBERS });
+  world = await makeCommunityWorld();
+  actor = world.actor;
+  const response = await upload(actor, world.communityId, { ties: TIES, members: MEMBERS });
   const { job } = (await response.json()) as { job: { id: string } };
   snapshot = (await runQueued(job.id)).result!.id;
   const { Attribute } = await import('@/server/models');
@@ -38,11 +35,7 @@ beforeAll(async () => {
   });
   columns = attributes.map(({ id }) => `attribute:${id}`).join(',');
 });
-afterAll(async () => {
-  const { sequelize } = await import('@/server/models');
-  await sequelize.close();
-  await database.drop();
-});
+afterAll(() => world.close());
 
 async function exported(route: Promise<{ GET: APIRoute }>): Promise<ArrayBuffer> {
   const { GET } = await route;

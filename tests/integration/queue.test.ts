@@ -1,6 +1,7 @@
 import { spawn, type ChildProcess } from 'node:child_process';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { createTestDatabase, type TestDatabase } from './database';
+import { until } from './processes/until';
 
 let database: TestDatabase;
 let models: typeof import('@/server/models');
@@ -37,16 +38,6 @@ const newJob = (): Promise<string> =>
     );
     return job.id;
   });
-
-async function until<T>(ask: () => Promise<T | null | false>, seconds = 40): Promise<T> {
-  const end = Date.now() + seconds * 1000;
-  for (;;) {
-    const answer = await ask();
-    if (answer) return answer;
-    if (Date.now() > end) throw new Error('waited too long');
-    await new Promise((resolve) => setTimeout(resolve, 100));
-  }
-}
 
 const inState = (id: string, state: string) => async () => {
   const job = await models.Job.findByPk(id);

@@ -1,10 +1,8 @@
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import type { Actor } from '@/lib/actor';
-import { ensureBucket, listObjects } from '@/server/storage';
-import { makeCommunity } from '../factories/imports';
+import { listObjects } from '@/server/storage';
+import { makeCommunityWorld, type CommunityWorld } from '../factories/community-world';
 import { largeFiles } from '../factories/large-files';
-import { actorOf } from './call';
-import { createTestDatabase, type TestDatabase } from './database';
 import {
   beginImport,
   beginReading,
@@ -22,24 +20,18 @@ const newWorker = (): RealWorker => {
   workers.push(worker);
   return worker;
 };
-let database: TestDatabase;
+let world: CommunityWorld;
 let actor: Actor;
 let communityId: string;
 let snapshotId: string;
 
 beforeAll(async () => {
-  database = await createTestDatabase();
-  await ensureBucket();
-  const made = await makeCommunity();
-  communityId = made.communityId;
-  actor = actorOf('analyst', made.workspaceId, 'analyst');
+  world = await makeCommunityWorld();
+  ({ actor, communityId } = world);
 });
-
 afterAll(async () => {
   for (const worker of workers) worker.kill();
-  const { sequelize } = await import('@/server/models');
-  await sequelize.close();
-  await database.drop();
+  await world.close();
 });
 
 test(

@@ -4,12 +4,26 @@ import { SecondThread } from './second-thread';
 /** From this many stored entries a second thread gains more than waking it costs (about 20,000 members). */
 const SHARED_FROM = 200_000;
 const PAGE = 65_536;
+/** As many pages as 32 bits address; what needs more is made outside. */
+const MOST_PAGES = 65_536;
+const LEAST_PAGES = 64;
 const HALF = 2;
 
 /** Where the kernels' small inputs and outputs stand: pointers, coefficients, sums. */
 const SLOTS = 4_096;
 
 const owners = new WeakMap<ArrayBufferLike, KernelMemory>();
+
+/** The pages asked for, or as many as there are. */
+function allocate(asked: number): WebAssembly.Memory {
+  for (let pages = Math.min(asked, MOST_PAGES); ; pages = Math.ceil(pages / 2))
+    try {
+      return new WebAssembly.Memory({ initial: pages, maximum: pages, shared: true });
+    } catch (error) {
+      // Fewer arrays fit then, and the rest take the plain path.
+      if (pages < LEAST_PAGES) throw error;
+    }
+}
 
 /**
  * A memory of fixed size that WebAssembly kernels work in, alone or in two threads. Arrays are handed out and never
@@ -37,8 +51,7 @@ export class KernelMemory {
     bytes: number,
     entries: number,
   ) {
-    const pages = Math.ceil((bytes + (3 * SLOTS + SLOTS) * 8) / PAGE) + 2;
-    this.memory = new WebAssembly.Memory({ initial: pages, maximum: pages, shared: true });
+    this.memory = allocate(Math.ceil((bytes + (3 * SLOTS + SLOTS) * 8) / PAGE) + 2);
     this.kernels = instantiate(this.memory);
     this.second = entries >= SHARED_FROM ? SecondThread.start(this.memory) : null;
     owners.set(this.memory.buffer, this);
@@ -251,7 +264,7 @@ export class KernelMemory {
 
   /** Ends the second thread. */
   close(): void {
-    this.second?.end();
+    void this.second?.end();
   }
 }
 

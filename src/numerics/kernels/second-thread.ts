@@ -26,6 +26,8 @@ for (;;) {
 const MOST_ARGUMENTS = 16;
 /** Looks at the other's word this often before sleeping: halves end within microseconds of each other. */
 const LOOKS = 2_000;
+/** One kernel on half of the rows takes milliseconds; a thread silent for this long is gone. */
+const PATIENCE = 60_000;
 
 /** A thread that runs one kernel at a time on the second half of the rows. */
 export class SecondThread {
@@ -36,12 +38,13 @@ export class SecondThread {
   private constructor(
     private readonly worker: Worker,
     control: SharedArrayBuffer,
+    private readonly patience: number,
   ) {
     this.words = new Int32Array(control, 0, 4);
     this.args = new Float64Array(control, 16);
   }
 
-  static start(memory: WebAssembly.Memory): SecondThread {
+  static start(memory: WebAssembly.Memory, patience = PATIENCE): SecondThread {
     const control = new SharedArrayBuffer(16 + 8 * MOST_ARGUMENTS);
     const worker = new Worker(source, {
       eval: true,
@@ -50,7 +53,7 @@ export class SecondThread {
     });
     // It must not keep a process alive that has nothing else to do.
     worker.unref();
-    return new SecondThread(worker, control);
+    return new SecondThread(worker, control, patience);
   }
 
   begin(name: keyof Kernels, args: readonly number[]): void {
@@ -61,16 +64,18 @@ export class SecondThread {
     Atomics.notify(this.words, 0);
   }
 
+  /** @throws Error when the thread died; what its half should have held is then unknown. */
   wait(): void {
     for (let looks = 0; looks < LOOKS; looks++) if (Atomics.load(this.words, 1) === this.turn) return;
     for (;;) {
       const seen = Atomics.load(this.words, 1);
       if (seen === this.turn) return;
-      Atomics.wait(this.words, 1, seen);
+      if (Atomics.wait(this.words, 1, seen, this.patience) === 'timed-out')
+        throw new Error('The second computing thread no longer answers.');
     }
   }
 
-  end(): void {
-    void this.worker.terminate();
+  async end(): Promise<void> {
+    await this.worker.terminate();
   }
 }

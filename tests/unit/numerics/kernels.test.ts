@@ -11,6 +11,7 @@ import {
 import { addCombination, dot, project, rotate } from '@/numerics/eigen/vectors';
 import { Supply } from '@/numerics/eigen/supply';
 import { KernelMemory } from '@/numerics/kernels';
+import { SecondThread } from '@/numerics/kernels/second-thread';
 import { compiledKernels } from '@/numerics/kernels/compiled';
 import type { LaplacianKind, Network } from '@/numerics';
 import { fromTies } from './networks';
@@ -214,3 +215,18 @@ function pairOfCommunities(): Network {
   });
   return { n: 400, offsets, targets, weights, strength: new Float64Array(400).fill(1) };
 }
+
+it('says so when its second thread is gone, instead of waiting for ever', async () => {
+  const memory = new WebAssembly.Memory({ initial: 2, maximum: 2, shared: true });
+  const thread = SecondThread.start(memory, 200);
+  await thread.end();
+  thread.begin('project', []);
+  expect(() => thread.wait()).toThrow('no longer answers');
+});
+
+it('works with what memory there is when more is asked for than 32 bits address', () => {
+  const memory = new KernelMemory(n, 2 ** 40, 0);
+  const x = memory.take(n).fill(2);
+  expect(memory.holds(x)).toBe(true);
+  expect(memory.dot(x, x)).toBe(4 * n);
+});

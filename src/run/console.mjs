@@ -12,6 +12,6 @@ export function checkNode() {
   const [major, minor] = process.versions.node.split('.').map(Number);
   if (major < 20 || (major === 20 && minor < 11))
     fail(
-      `Thrum needs Node.js 20.11 or newer; this is ${process.versions.node}. Install the package nodejs of a newer release.`,
+      `Thrum needs Node.js 20.19 or newer; this is ${process.versions.node}. Install the package nodejs of a newer release.`,
     );
 }

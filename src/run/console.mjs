@@ -10,7 +10,7 @@ export function fail(line) {
 /** Ends early, in words, where Node.js is too old. */
 export function checkNode() {
   const [major, minor] = process.versions.node.split('.').map(Number);
-  if (major < 20 || (major === 20 && minor < 11))
+  if (major < 20 || (major === 20 && minor < 19))
     fail(
       `Thrum needs Node.js 20.19 or newer; this is ${process.versions.node}. Install the package nodejs of a newer release.`,
     );

@@ -2,6 +2,8 @@ import { z } from 'zod';
 
 const flag = z.enum(['0', '1']).transform((value) => value === '1');
 
+const limit = (usual: number, most: number) => z.coerce.number().int().min(1).max(most).default(usual);
+
 const schema = z.object({
   HOST: z.string().default('127.0.0.1'),
   PORT: z.coerce.number().int().min(1).max(65535).default(4321),
@@ -18,6 +20,12 @@ const schema = z.object({
   S3_BUCKET: z.string().min(3),
   S3_ACCESS_KEY_ID: z.string().min(1),
   S3_SECRET_ACCESS_KEY: z.string().min(1),
+  /** What one import may hold. */
+  IMPORT_FILE_MB: limit(512, 100_000),
+  IMPORT_TEXT_MB: limit(2_048, 1_000_000),
+  IMPORT_TIE_ROWS: limit(10_000_000, 100_000_000),
+  IMPORT_MEMBER_ROWS: limit(1_000_000, 10_000_000),
+  IMPORT_COLUMNS: limit(200, 10_000),
   LOG_LEVEL: z.enum(['trace', 'debug', 'info', 'warn', 'error', 'silent']).default('info'),
 });
 

@@ -55,7 +55,14 @@ test('the karate club of Zachary (1977) lands with its 34 members and 78 ties', 
   expect(job).toMatchObject({ state: 'succeeded', progress: 1, result: { kind: 'snapshot' } });
   expect(report!.counts).toEqual({
     tieRows: { read: 78, kept: 78, merged: 0, refused: 0, selfTies: 0, leftOut: 0 },
-    memberRows: { read: 34, kept: 34, refused: 0, blankCells: expect.any(Number) as number, refusedCells: 0 },
+    memberRows: {
+      read: 34,
+      kept: 34,
+      refused: 0,
+      leftOut: 0,
+      blankCells: expect.any(Number) as number,
+      refusedCells: 0,
+    },
     membersFromTies: 0,
   });
   const { GET } = await import('@/pages/api/v1/snapshots/[snapshot]/index');

@@ -202,6 +202,7 @@ export async function makeWalkFixture(): Promise<WalkFixture> {
   const tokenId = id();
   const viewId = id();
   const shareId = id();
+  const recipeId = id();
   const restore = async (): Promise<void> => {
     await m.View.findOrCreate({
       where: { id: viewId },
@@ -224,6 +225,17 @@ export async function makeWalkFixture(): Promise<WalkFixture> {
     await m.Membership.findOrCreate({
       where: { id: membershipId },
       defaults: { id: membershipId, workspaceId, userId: 'user-removable', role: 'viewer' },
+    });
+    await m.ImportRecipe.findOrCreate({
+      where: { id: recipeId },
+      defaults: {
+        id: recipeId,
+        ...common,
+        communityId: community.id,
+        name: 'Secret recipe',
+        options: {},
+        createdBy: 'user-analyst',
+      },
     });
     await m.ApiToken.findOrCreate({
       where: { id: tokenId },
@@ -251,6 +263,7 @@ export async function makeWalkFixture(): Promise<WalkFixture> {
       workspace: workspaceId,
       community: community.id,
       import: imported.id,
+      recipe: recipeId,
       snapshot: snapshot.id,
       member: people[0]!.id,
       attribute: attribute.id,

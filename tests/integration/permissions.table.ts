@@ -57,6 +57,18 @@ export const ENDPOINTS: Readonly<Record<string, WalkEndpoint>> = {
   'POST /communities/{community}/imports': change('analysis.make'),
   'GET /imports/{import}': see('analysis.make'),
   'GET /imports/{import}/problems.csv': see('analysis.make'),
+  'GET /imports/{import}/problems': see('analysis.make', () => ({ kind: '0' })),
+  'GET /communities/{community}/recipes': see('analysis.make'),
+  'POST /communities/{community}/recipes': change('analysis.make', () => ({ name: 'Walked', options: {} })),
+  // The fixture's recipe is the analyst's and not shared.
+  'PATCH /recipes/{recipe}': {
+    ...change('analysis.make', () => ({ name: 'Walked' })),
+    notTheirs: ['owner', 'admin'],
+  },
+  'DELETE /recipes/{recipe}': {
+    ...change('analysis.make'),
+    notTheirs: ['owner', 'admin'],
+  },
   'POST /imports/{import}/accept': change('analysis.make'),
   'POST /imports/{import}/discard': change('analysis.make'),
   'GET /communities/{community}/snapshots': see('explore.open'),

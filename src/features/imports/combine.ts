@@ -8,8 +8,8 @@ export interface CombinedTies {
   readonly weights: Float64Array;
   /** Rows behind each tie. */
   readonly counts: Int32Array;
-  /** Most frequent kind, as in TieRows. */
-  readonly kindOf: Uint16Array;
+  /** Most frequent kind, null for none. */
+  readonly kinds: (string | null)[];
   /** Rows of ties that the choices leave out. */
   readonly leftOut: number;
 }
@@ -49,6 +49,10 @@ function mostFrequent(kinds: Map<number, number>): number {
   return best;
 }
 
+/** Whether a weight is enough for a tie. */
+const isTie = (weight: number, { minimumWeight }: Pick<Choices, 'minimumWeight'>): boolean =>
+  weight > 0 && Number.isFinite(weight) && weight >= (minimumWeight ?? 0);
+
 /**
  * Makes undirected ties of rows: repeats in one direction are folded first, then the two directions become one
  * weight, then the logarithm and the smallest weight are applied.
@@ -60,7 +64,7 @@ export function combineTies(rows: TieRows, n: number, choices: Choices): Combine
   const targets = new Int32Array(order.length);
   const weights = new Float64Array(order.length);
   const counts = new Int32Array(order.length);
-  const kindOf = new Uint16Array(order.length);
+  const kindsOfTies: (string | null)[] = [];
   let ties = 0;
   let leftOut = 0;
   const kinds = new Map<number, number>();
@@ -84,12 +88,13 @@ export function combineTies(rows: TieRows, n: number, choices: Choices): Combine
     let weight = choices.directions === 'larger' ? Math.max(there, back) : there + back;
     if (choices.directions === 'mutual' && (there === 0 || back === 0)) weight = 0;
     if (choices.logWeight) weight = Math.log1p(weight);
-    if (weight > 0 && Number.isFinite(weight) && weight >= (choices.minimumWeight ?? 0)) {
+    if (isTie(weight, choices)) {
       sources[ties] = low;
       targets[ties] = high;
       weights[ties] = weight;
       counts[ties] = end - start;
-      kindOf[ties++] = mostFrequent(kinds);
+      kindsOfTies.push(rows.kinds[mostFrequent(kinds) - 1] ?? null);
+      ties++;
     } else leftOut += end - start;
     start = end;
   }
@@ -98,7 +103,82 @@ export function combineTies(rows: TieRows, n: number, choices: Choices): Combine
     targets: targets.slice(0, ties),
     weights: weights.slice(0, ties),
     counts: counts.slice(0, ties),
-    kindOf: kindOf.slice(0, ties),
+    kinds: kindsOfTies,
     leftOut,
+  };
+}
+
+/** Ties of an earlier snapshot, by the places of this import. */
+export type EarlierTies = Omit<CombinedTies, 'leftOut'>;
+
+/**
+ * Adds ties that are new since an earlier snapshot to those that it had. Its weights are aged by the half-life first;
+ * the logarithm is taken back, and taken again of the total.
+ * @param fresh made by combineTies without logarithm and smallest weight
+ * @param age half-lives passed since the earlier snapshot
+ */
+export function addToEarlier(
+  earlier: EarlierTies,
+  fresh: CombinedTies,
+  n: number,
+  age: number,
+  choices: Choices,
+): CombinedTies & { touched: number } {
+  const key = (source: number, target: number): number => source * n + target;
+  const place = new Map<number, number>();
+  const sources: number[] = [];
+  const targets: number[] = [];
+  const weights: number[] = [];
+  const counts: number[] = [];
+  const kinds: (string | null)[] = [];
+  for (let t = 0; t < earlier.sources.length; t++) {
+    const [low, high] = [earlier.sources[t]!, earlier.targets[t]!].sort((a, b) => a - b) as [number, number];
+    place.set(key(low, high), t);
+    sources.push(low);
+    targets.push(high);
+    const raw = choices.logWeight ? Math.expm1(earlier.weights[t]!) : earlier.weights[t]!;
+    weights.push(raw * 0.5 ** age);
+    counts.push(earlier.counts[t]!);
+    kinds.push(earlier.kinds[t]!);
+  }
+  const rowsOf = new Map<number, number>();
+  for (let t = 0; t < fresh.sources.length; t++) {
+    const at = place.get(key(fresh.sources[t]!, fresh.targets[t]!)) ?? sources.length;
+    rowsOf.set(at, fresh.counts[t]!);
+    if (at === sources.length) {
+      sources.push(fresh.sources[t]!);
+      targets.push(fresh.targets[t]!);
+      weights.push(fresh.weights[t]!);
+      counts.push(fresh.counts[t]!);
+      kinds.push(fresh.kinds[t]!);
+      continue;
+    }
+    weights[at] =
+      choices.repeats === 'largest'
+        ? Math.max(weights[at]!, fresh.weights[t]!)
+        : weights[at]! + fresh.weights[t]!;
+    counts[at]! += fresh.counts[t]!;
+    kinds[at] = fresh.kinds[t] ?? kinds[at]!;
+  }
+  let leftOut = fresh.leftOut;
+  let touched = 0;
+  const kept: number[] = [];
+  weights.forEach((weight, at) => {
+    weights[at] = choices.logWeight ? Math.log1p(weight) : weight;
+    const rows = rowsOf.get(at) ?? 0;
+    if (isTie(weights[at], choices)) {
+      kept.push(at);
+      if (rows > 0) touched++;
+    } else leftOut += rows;
+  });
+  kept.sort((a, b) => sources[a]! - sources[b]! || targets[a]! - targets[b]!);
+  return {
+    sources: Int32Array.from(kept, (at) => sources[at]!),
+    targets: Int32Array.from(kept, (at) => targets[at]!),
+    weights: Float64Array.from(kept, (at) => weights[at]!),
+    counts: Int32Array.from(kept, (at) => counts[at]!),
+    kinds: kept.map((at) => kinds[at]!),
+    leftOut,
+    touched,
   };
 }

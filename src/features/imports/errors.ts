@@ -7,7 +7,7 @@ export const importErrors = {
       415,
       'not-multipart',
       'Wrong content type.',
-      'Send multipart/form-data with a file part named ties.',
+      'Send multipart/form-data with a file part named ties, or JSON with the ids of finished uploads.',
     ),
   noTies: () =>
     new ProblemError(
@@ -22,16 +22,12 @@ export const importErrors = {
       400,
       'unknown-part',
       'Please check what was sent.',
-      `There is no part named ${name.slice(0, 60)}. Use ties, members and options.`,
+      `There is no part named ${name.slice(0, 60)}. Use ties, members, mapping and options.`,
     ),
   brokenUpload: () =>
     new ProblemError(400, 'broken-upload', 'The upload ended early.', 'Nothing was kept. Send it again.'),
   tooLarge: (limit: string) =>
     new ProblemError(413, 'too-large', 'That is too large.', `One file may hold ${limit}. Nothing was kept.`),
-  empty: (file: string) => unprocessable('empty-file', `The ${file} file is empty.`),
-  notText: (file: string) =>
-    unprocessable('not-text', `The ${file} file is not a text file. Save it as CSV and upload that.`),
-  noRows: (file: string) => unprocessable('no-rows', `The ${file} file has a header but no rows.`),
   noColumn: (file: string, column: string, headers: readonly string[]) =>
     unprocessable(
       'missing-column',
@@ -46,13 +42,16 @@ export const importErrors = {
     unprocessable('too-many-columns', `The ${file} file has more than ${limit} columns.`),
   tooManyRows: (file: string, limit: number) =>
     unprocessable('too-many-rows', `The ${file} file has more than ${limit.toLocaleString('en-GB')} rows.`),
-  longField: (file: string, line: number) =>
+  noBase: () =>
     unprocessable(
-      'long-field',
-      `Near line ${line} of the ${file} file a field does not end. Look for a quotation mark that is not closed.`,
+      'no-base',
+      'There is no earlier snapshot that these changes could be added to. Load everything once first.',
     ),
-  truncated: (file: string) =>
-    unprocessable('truncated', `The ${file} file is damaged: it ends in the middle. Upload it again.`),
+  changedType: (name: string, before: string, now: string) =>
+    unprocessable(
+      'changed-type',
+      `“${name.slice(0, 60)}” was a ${before} in the earlier snapshot and is a ${now} in this file. Choose its type, or load everything anew.`,
+    ),
   noTiesLeft: () =>
     unprocessable(
       'no-ties-left',

@@ -116,45 +116,30 @@ export function guessMemberColumns(headers: readonly string[]): MemberColumns {
   };
 }
 
-/** Which of two files a header belongs to. */
-export function guessRole(headers: readonly string[]): 'ties' | 'members' {
+/** What a file is for, from its header. */
+export function guessRole(headers: readonly string[]): 'ties' | 'members' | 'mapping' {
+  const names = new Set(headers.map(words));
+  if (
+    headers.length === 2 &&
+    (names.has('old') || names.has('old_id')) &&
+    (names.has('new') || names.has('new_id'))
+  )
+    return 'mapping';
   const { source, target } = guessTieColumns(headers);
   return source !== undefined && target !== undefined ? 'ties' : 'members';
 }
 
-const DELIMITERS = [',', ';', '\t', '|'] as const;
+const OLD = ['old', 'old_id', 'from', 'before', 'previous', 'was'];
+const NEW = ['new', 'new_id', 'to', 'after', 'now', 'is'];
 
-/** Cells that a line would have, quotation marks respected. */
-function cellsWith(line: string, delimiter: string): number {
-  let cells = 1;
-  let quoted = false;
-  for (const sign of line) {
-    if (sign === '"') quoted = !quoted;
-    else if (sign === delimiter && !quoted) cells++;
-  }
-  return cells;
-}
-
-/**
- * The delimiter that splits the first lines into equally many cells, the more the better. A header decides where
- * rows are ragged. A comma when nothing splits them.
- */
-export function guessDelimiter(sample: string): string {
-  const lines = sample
-    .split(/\r\n|\r|\n/)
-    .filter((line) => line.trim() !== '')
-    .slice(0, 20);
-  let best = ',';
-  let score = 0;
-  for (const delimiter of DELIMITERS) {
-    const header = cellsWith(lines[0] ?? '', delimiter);
-    if (header < 2) continue;
-    const same = lines.filter((line) => cellsWith(line, delimiter) === header).length / lines.length;
-    const value = header * (0.2 + same);
-    if (value > score) {
-      best = delimiter;
-      score = value;
-    }
-  }
-  return best;
+/** Columns of a file of changed ids. */
+export function guessMappingColumns(headers: readonly string[]): {
+  old?: string | undefined;
+  new?: string | undefined;
+} {
+  const old = find(headers, OLD, new Set());
+  const now = find(headers, NEW, new Set(old === undefined ? [] : [old]));
+  if (old === undefined && now === undefined && headers.length === 2)
+    return { old: headers[0], new: headers[1] };
+  return { old, new: now };
 }

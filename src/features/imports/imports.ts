@@ -1,20 +1,34 @@
 import * as z from 'zod';
 import { idSchema } from '@/lib/ids';
 import { operation } from '@/lib/operation';
+import { readSettingsSchema } from '@/features/files';
 import { acceptedSchema } from '@/features/jobs';
 
-/** What one import may hold; said before the upload and enforced while streaming. */
-export const LIMITS = {
-  fileBytes: 512 * 1024 * 1024,
+export const ROLES = ['ties', 'members', 'mapping'] as const;
+export type FileRole = (typeof ROLES)[number];
+
+/** What one import may hold; configured, said before the upload and enforced while streaming. */
+export interface ImportLimits {
+  readonly fileBytes: number;
   /** After unpacking gzip. */
-  textBytes: 2 * 1024 * 1024 * 1024,
-  tieRows: 10_000_000,
-  memberRows: 1_000_000,
-  columns: 200,
+  readonly textBytes: number;
+  readonly tieRows: number;
+  readonly memberRows: number;
+  readonly columns: number;
+  readonly cells: number;
+  readonly cellLength: number;
+  readonly idLength: number;
+  readonly labelLength: number;
+  /** Refused rows kept with their reason; all are counted. */
+  readonly problems: number;
+}
+
+/** Limits that no configuration changes: they keep rows and pages readable. */
+export const FIXED_LIMITS = {
   cells: 20_000_000,
   cellLength: 10_000,
   idLength: 200,
-  /** Refused rows kept with their reason; all are counted. */
+  labelLength: 200,
   problems: 100_000,
 } as const;
 
@@ -23,10 +37,14 @@ const columnName = z.string().min(1).max(500);
 const attributeSchema = z.object({
   column: columnName,
   name: z.string().trim().min(1).max(120),
-  type: z.enum(['number', 'label']).optional(),
+  /** A date becomes the months from it to the day of the snapshot. */
+  type: z.enum(['number', 'label', 'date']).optional(),
   direction: z.enum(['higher-better', 'higher-worse', 'neither']).default('neither'),
   sensitive: z.boolean().default(false),
   countColumn: columnName.optional(),
+  /** Numbers outside are refused, cell by cell. */
+  least: z.number().optional(),
+  most: z.number().optional(),
 });
 export type AttributeOption = z.infer<typeof attributeSchema>;
 
@@ -45,7 +63,7 @@ export const importOptionsSchema = z.object({
     .partial()
     .default({}),
   members: z
-    .object({ id: columnName, name: columnName, attributes: z.array(attributeSchema).max(LIMITS.columns) })
+    .object({ id: columnName, name: columnName, attributes: z.array(attributeSchema).max(10_000) })
     .partial()
     .default({}),
   directions: z.enum(['sum', 'larger', 'mutual']).default('sum'),
@@ -53,6 +71,18 @@ export const importOptionsSchema = z.object({
   logWeight: z.boolean().default(false),
   halfLifeDays: z.number().positive().max(100_000).nullable().default(null),
   minimumWeight: z.number().nonnegative().nullable().default(null),
+  /** What becomes of members without a tie. */
+  loners: z.enum(['keep', 'leave-out']).default('keep'),
+  /** `changes`: the files hold only what is new since `base`, by default the newest snapshot. */
+  mode: z.enum(['full', 'changes']).default('full'),
+  base: idSchema.optional(),
+  /** Columns of the file of changed ids. */
+  mapping: z.object({ old: columnName, new: columnName }).partial().default({}),
+  /** How each file is read; what is left out is detected. */
+  reading: z
+    .object({ ties: readSettingsSchema, members: readSettingsSchema, mapping: readSettingsSchema })
+    .partial()
+    .default({}),
 });
 export type ImportOptions = z.output<typeof importOptionsSchema>;
 
@@ -70,21 +100,38 @@ export const countsSchema = z.object({
     read: z.int(),
     kept: z.int(),
     refused: z.int(),
+    /** Members without a tie, left out by choice. */
+    leftOut: z.int(),
     blankCells: z.int(),
     refusedCells: z.int(),
   }),
   membersFromTies: z.int(),
+  /** Changed ids that were read, and refused. */
+  mappingRows: z.object({ read: z.int(), kept: z.int(), refused: z.int() }).optional(),
+  /** Taken over from the earlier snapshot, where the files held changes only. */
+  carriedOver: z.object({ members: z.int(), ties: z.int() }).optional(),
 });
 export type ImportCounts = z.infer<typeof countsSchema>;
 
 export const problemSchema = z.object({
-  file: z.enum(['ties', 'members']),
+  file: z.enum(ROLES),
   line: z.int(),
   column: z.string().nullable(),
   value: z.string().nullable(),
   reason: z.string(),
 });
 export type ImportProblem = z.infer<typeof problemSchema>;
+
+/** Problems of the same kind: one column, one reason. */
+export const problemKindSchema = z.object({
+  kind: z.int(),
+  file: z.enum(ROLES),
+  column: z.string().nullable(),
+  reason: z.string(),
+  count: z.int(),
+  firstLine: z.int(),
+});
+export type ProblemKind = z.infer<typeof problemKindSchema>;
 
 export const warningSchema = z.object({ code: z.string(), text: z.string() });
 export type ImportWarning = z.infer<typeof warningSchema>;
@@ -94,12 +141,13 @@ export const importSchema = z
     id: z.string(),
     communityId: z.string(),
     state: z.enum(['received', 'checking', 'review', 'accepted', 'discarded', 'failed', 'cancelled']),
-    files: z.array(z.object({ role: z.enum(['ties', 'members']), name: z.string(), bytes: z.number() })),
+    files: z.array(z.object({ role: z.enum(ROLES), name: z.string(), bytes: z.number() })),
     options: z.record(z.string(), z.unknown()),
     counts: countsSchema.nullable(),
     warnings: z.array(warningSchema),
     problems: z.array(problemSchema),
     problemsTotal: z.int(),
+    problemKinds: z.array(problemKindSchema),
     snapshotId: z.string().nullable(),
     jobId: z.string().nullable(),
     createdAt: z.string(),
@@ -153,6 +201,21 @@ export const importOperations = {
     params: one,
     status: 200,
     produces: 'text/csv',
+  }),
+  problemPage: operation({
+    ...shared,
+    id: 'importProblemPage',
+    method: 'get',
+    path: '/api/v1/imports/{import}/problems',
+    summary: 'Refused rows of one kind, a page at a time',
+    params: one,
+    query: z.object({
+      kind: z.coerce.number().int().nonnegative(),
+      limit: z.coerce.number().int().min(1).max(1000).default(100),
+      cursor: z.coerce.number().int().nonnegative().default(0),
+    }),
+    status: 200,
+    response: z.object({ items: z.array(problemSchema), nextCursor: z.string().nullable() }),
   }),
   accept: operation({
     ...shared,

@@ -6,6 +6,9 @@ export {
   importFor,
   listImports,
   presentImport,
+  problemPage,
   problemsCsv,
 } from './read.server';
 export { receiveUpload, type Upload } from './upload.server';
+export { importLimits } from './limits.server';
+export { changeRecipe, createRecipe, deleteRecipe, listRecipes } from './recipes.server';

@@ -1,2 +1,10 @@
 export { guessMemberColumns, guessRole, guessTieColumns } from './guess';
-export { importOperations, LIMITS, type ImportCounts, type ImportOptions, type ImportView } from './imports';
+export {
+  importOperations,
+  importOptionsSchema,
+  type ImportCounts,
+  type ImportLimits,
+  type ImportOptions,
+  type ImportView,
+} from './imports';
+export { recipeOperations } from './recipes';

@@ -1,128 +1,19 @@
-import { QueryTypes, type Transaction } from 'sequelize';
-import { deleteObject, getObject } from '@/server/storage';
 import { Import, sequelize, Snapshot, type JobResult } from '@/server/models';
 import type { JobContext, JobHandler } from '@/server/queue';
 import { runInThread } from '@/server/threads/run-in-thread';
 import { audit } from '@/features/workspaces/index.server';
 import type { Shape } from '@/features/network';
-import { landSnapshot } from '@/features/network/index.server';
-import { combineTies } from './combine';
+import { landSnapshot, settleIds } from '@/features/network/index.server';
 import { importErrors } from './errors';
-import { importOptionsSchema, type ImportCounts, type ImportOptions, type ImportProblem } from './imports';
-import { IdTable, MembersReader } from './members';
-import { Problems } from './problems';
-import { readRows } from './rows.server';
-import { inspectText, openText } from './text.server';
-import { TiesReader } from './ties';
+import { dropFiles, removeHalf } from './files.server';
+import { importOptionsSchema } from './imports';
+import { prepare } from './prepare.server';
+import { saveProblems } from './problem-rows.server';
 import { warningsFor } from './warnings';
 
-const CHUNK = 5_000;
 /** Shares of the progress bar: reading the files, working out the shape, writing rows. */
 const READ = 0.4;
 const SHAPED = 0.6;
-
-interface ReadFiles {
-  readonly table: IdTable;
-  readonly members: MembersReader | null;
-  readonly ties: TiesReader;
-  readonly problems: Problems;
-  readonly notes: string[];
-}
-
-/** Streams both files through their readers; progress is the share of bytes read. */
-async function readFiles(
-  row: Import,
-  options: ImportOptions,
-  takenOn: string,
-  context: JobContext,
-): Promise<ReadFiles> {
-  const total = row.files.reduce((sum, file) => sum + file.bytes, 0);
-  const table = new IdTable();
-  const problems = new Problems();
-  const notes: string[] = [];
-  let bytes = 0;
-  const readFile = async (role: 'ties' | 'members', reader: MembersReader | TiesReader): Promise<void> => {
-    const file = row.files.find((one) => one.role === role)!;
-    const open = () => getObject(file.key);
-    const info = await inspectText(open, role);
-    if (info.warning) notes.push(info.warning);
-    const text = await openText(open, info, role, (count) => {
-      bytes += count;
-      context.progress((READ * bytes) / total, `Reading ${role}, row ${reader.read.toLocaleString('en-GB')}`);
-    });
-    await readRows(text, info.delimiter, role, reader, context.signal);
-    if (reader.read === 0) throw importErrors.noRows(role);
-  };
-  const hasMembers = row.files.some((file) => file.role === 'members');
-  const members = hasMembers ? new MembersReader(table, options, problems) : null;
-  if (members) await readFile('members', members);
-  const ties = new TiesReader(table, options, problems, takenOn);
-  await readFile('ties', ties);
-  return { table, members, ties, problems, notes };
-}
-
-function countsOf(
-  { members, ties, table }: ReadFiles,
-  kept: number,
-  leftOut: number,
-  blankCells: number,
-): ImportCounts {
-  const { read, refused, selfTies } = ties;
-  const counts: ImportCounts = {
-    tieRows: { read, kept, merged: read - refused - selfTies - leftOut - kept, refused, selfTies, leftOut },
-    memberRows: {
-      read: members?.read ?? 0,
-      kept: members?.kept ?? 0,
-      refused: members?.refused ?? 0,
-      blankCells,
-      refusedCells: members?.refusedCells ?? 0,
-    },
-    membersFromTies: table.ids.length - (members?.kept ?? 0),
-  };
-  const { memberRows } = counts;
-  // Rows in = rows kept + merged + refused, always; anything else is a row lost in silence.
-  if (counts.tieRows.merged < 0 || memberRows.read !== memberRows.kept + memberRows.refused)
-    throw new Error('import counts do not add up');
-  return counts;
-}
-
-/** Removes what an interrupted run left, and whatever an ended import must not keep. */
-async function clear(importId: string, transaction?: Transaction): Promise<void> {
-  const options = transaction ? { transaction } : {};
-  await Snapshot.destroy({ where: { importId, state: 'pending' }, ...options });
-  await sequelize.query('DELETE FROM import_problems WHERE import_id = $1', { bind: [importId], ...options });
-}
-
-async function saveProblems(
-  importId: string,
-  problems: readonly ImportProblem[],
-  transaction: Transaction,
-): Promise<void> {
-  for (let from = 0; from < problems.length; from += CHUNK) {
-    const part = problems.slice(from, from + CHUNK);
-    await sequelize.query(
-      `INSERT INTO import_problems (import_id, ordinal, file, line, "column", value, reason)
-       SELECT $1, * FROM unnest($2::int[], $3::text[], $4::int[], $5::text[], $6::text[], $7::text[])`,
-      {
-        bind: [
-          importId,
-          part.map((_, i) => from + i),
-          part.map((one) => one.file),
-          part.map((one) => one.line),
-          part.map((one) => one.column),
-          part.map((one) => one.value),
-          part.map((one) => one.reason),
-        ],
-        type: QueryTypes.INSERT,
-        transaction,
-      },
-    );
-  }
-}
-
-export const dropFiles = async (row: Import): Promise<void> => {
-  await Promise.all(row.files.map((file) => deleteObject(file.key).catch(() => undefined)));
-};
 
 const today = (): string => new Date().toISOString().slice(0, 10);
 
@@ -154,41 +45,34 @@ export const importJob: JobHandler = async (context) => {
 async function makeSnapshot(context: JobContext): Promise<void> {
   const row = await Import.findByPk(context.targetId);
   if (!row || row.state === 'discarded') return;
-  await clear(row.id);
+  await removeHalf(row.id);
   await Import.update({ state: 'checking' }, { where: { id: row.id, state: 'received' } });
   const options = importOptionsSchema.parse(row.options);
   const takenOn = options.takenOn ?? today();
-  const files = await readFiles(row, options, takenOn, context);
-  const attributes = files.members?.finish() ?? [];
-  const rows = files.ties.finish();
-  const n = files.table.ids.length;
-  const combined = combineTies(rows, n, options);
-  const counts = countsOf(files, combined.sources.length, combined.leftOut, files.members?.blankCells ?? 0);
-  const problemsTotal = files.problems.total;
-  if (combined.sources.length === 0) {
+  const prepared = await prepare(row, options, takenOn, context, READ);
+  const { problems, counts, assembled } = prepared;
+  const report = {
+    counts: { ...counts },
+    problemsTotal: problems.total,
+    problemKinds: problems.kinds.map((kind) => ({ ...kind })),
+  };
+  if (assembled.ties.sources.length === 0) {
     await sequelize.transaction(async (transaction) => {
-      await saveProblems(row.id, files.problems.kept, transaction);
-      await row.update({ counts, problemsTotal }, { transaction });
+      await saveProblems(row.id, problems.kept, transaction);
+      await row.update(report, { transaction });
     });
     throw importErrors.noTiesLeft();
   }
-  const { sources, targets, weights } = combined;
+  const { sources, targets, weights } = assembled.ties;
   const shape = await runInThread<Shape>(
     'shape',
-    { n, sources, targets, weights },
+    { n: assembled.ids.length, sources, targets, weights },
     {
       signal: context.signal,
       progress: (done, step) => context.progress(READ + (SHAPED - READ) * done, step),
     },
   );
-  const warnings = warningsFor({
-    ids: files.table.ids,
-    inMembersFile: files.members?.kept ?? 0,
-    shape,
-    attributes,
-    spaced: files.table.spaced,
-    notes: [...files.notes, ...(files.members?.notes ?? [])],
-  });
+  const warnings = warningsFor({ ...prepared, shape });
   const review = options.accept === 'review';
   await sequelize.transaction(async (transaction) => {
     const landed = await landSnapshot(
@@ -200,11 +84,9 @@ async function makeSnapshot(context: JobContext): Promise<void> {
         takenOn,
         label: options.label ?? takenOn,
         state: review ? 'pending' : 'ready',
-        ids: files.table.ids,
-        names: files.members?.names ?? [],
         shape,
-        ties: { ...combined, kinds: (tie) => rows.kinds[combined.kindOf[tie]! - 1] ?? null },
-        attributes,
+        formerOf: prepared.formerOf,
+        ...assembled,
       },
       (done, step) => {
         if (context.signal.aborted) throw Object.assign(new Error('Stopped.'), { name: 'AbortError' });
@@ -212,13 +94,13 @@ async function makeSnapshot(context: JobContext): Promise<void> {
       },
       transaction,
     );
-    await saveProblems(row.id, files.problems.kept, transaction);
+    if (!review && prepared.formerOf.size > 0) await settleIds(landed.id, transaction);
+    await saveProblems(row.id, problems.kept, transaction);
     await row.update(
       {
+        ...report,
         state: review ? 'review' : 'accepted',
-        counts: { ...counts },
         warnings,
-        problemsTotal,
         snapshotId: landed.id,
         finishedAt: new Date(),
       },

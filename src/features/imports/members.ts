@@ -1,51 +1,22 @@
+import type { RowSink } from '@/features/files';
+import { buildAttribute, type AttributeColumn, type ColumnCells } from './attributes';
+import { cellsThatFit } from './cells';
 import { importErrors } from './errors';
 import { guessMemberColumns } from './guess';
-import { LIMITS, type AttributeOption, type ImportOptions } from './imports';
-import { normaliseId, parseNumber, whyNotNumber } from './numbers';
-import type { Problems } from './problems';
-
-/** Ids in the order met, with their place. */
-export class IdTable {
-  readonly ids: string[] = [];
-  private readonly placeOf = new Map<string, number>();
-  /** Ids that were written with outer spaces somewhere. */
-  spaced = 0;
-
-  find(id: string): number | undefined {
-    return this.placeOf.get(id);
-  }
-  /** Place of an id, adding it when it is new. */
-  place(id: string): number {
-    const known = this.placeOf.get(id);
-    if (known !== undefined) return known;
-    const place = this.ids.length;
-    this.ids.push(id);
-    this.placeOf.set(id, place);
-    return place;
-  }
-}
-
-export interface AttributeColumn {
-  readonly name: string;
-  readonly type: 'number' | 'label';
-  readonly direction: AttributeOption['direction'];
-  readonly sensitive: boolean;
-  readonly countOf: string | null;
-  /** One a member of the file; NaN where missing. */
-  readonly values: Float64Array;
-  /** For labels; null where missing. */
-  readonly labels: (string | null)[] | null;
-}
+import { float64, Growing, int32 } from './growing';
+import type { IdTable } from './id-table';
+import type { AttributeOption, ImportLimits, ImportOptions } from './imports';
+import { normaliseId, whyNotId } from './numbers';
+import { storable, type Problems } from './problems';
 
 interface Wanted extends AttributeOption {
   readonly index: number;
+  /** Name of the attribute that counts what this one was made of. */
+  readonly countOf: string | null;
 }
 
-/** Above this share of filled cells that are no numbers, a column is taken for labels. */
-const LABEL_SHARE = 0.05;
-
 /** Takes the rows of a members file and turns its columns into attributes. */
-export class MembersReader {
+export class MembersReader implements RowSink {
   read = 0;
   refused = 0;
   blankCells = 0;
@@ -55,18 +26,27 @@ export class MembersReader {
   private headers: string[] = [];
   private idIndex = -1;
   private nameIndex = -1;
+  private cutNames = 0;
   private wanted: Wanted[] = [];
-  private readonly lines: number[] = [];
+  private readonly lines = new Growing(float64(1024), float64);
+  private readonly placeOfRow = new Growing(int32(1024), int32);
+  private readonly seen = new Set<number>();
   private readonly cells: string[][] = [];
+  private readonly takenOn: number;
 
   constructor(
     private readonly table: IdTable,
     private readonly options: ImportOptions,
     private readonly problems: Problems,
-  ) {}
+    takenOn: string,
+    private readonly limits: ImportLimits,
+  ) {
+    this.takenOn = Date.parse(`${takenOn}T00:00:00Z`);
+  }
 
   header(headers: string[]): void {
-    if (headers.length > LIMITS.columns) throw importErrors.tooManyColumns('members', LIMITS.columns);
+    if (headers.length > this.limits.columns)
+      throw importErrors.tooManyColumns('members', this.limits.columns);
     const twice = headers.find((header, index) => header !== '' && headers.indexOf(header) !== index);
     if (twice !== undefined) throw importErrors.duplicateHeader('members', twice);
     this.headers = headers;
@@ -85,90 +65,112 @@ export class MembersReader {
       members.attributes ??
       guess.attributes.map((one): AttributeOption => ({ ...one, direction: 'neither', sensitive: false }));
     const own = attributes.filter((one) => one.column !== headers[this.idIndex]);
-    this.wanted = own.map((one) => ({ ...one, index: index(one.column, one.name) }));
+    // A count that weighs a score is kept as an attribute, also where nobody asked for it by itself.
+    for (const { countColumn } of [...own])
+      if (countColumn !== undefined && !own.some((one) => one.column === countColumn))
+        own.push({ column: countColumn, name: countColumn, direction: 'neither', sensitive: false });
+    const nameOf = (column: string | undefined): string | null =>
+      own.find((one) => one.column === column)?.name ?? null;
+    this.wanted = own.map((one) => ({
+      ...one,
+      index: index(one.column, one.name),
+      countOf: nameOf(one.countColumn),
+    }));
     const name = own.find((one, at) => own.findIndex((other) => other.name === one.name) !== at)?.name;
     if (name !== undefined) throw importErrors.duplicateHeader('members', name);
+    for (const _ of this.wanted) this.cells.push([]);
   }
 
-  row(cells: string[], line: number): void {
-    if (++this.read > LIMITS.memberRows) throw importErrors.tooManyRows('members', LIMITS.memberRows);
-    if (this.read * this.headers.length > LIMITS.cells)
-      throw importErrors.tooManyRows('members', Math.floor(LIMITS.cells / this.headers.length));
-    const refuse = (column: string | null, value: string | null, reason: string): void => {
+  broken(line: number, value: string, reason: string): void {
+    this.count();
+    this.refused++;
+    this.problems.add('members', line, null, value, reason);
+  }
+
+  private count(): void {
+    const { memberRows, cells } = this.limits;
+    if (++this.read > memberRows) throw importErrors.tooManyRows('members', memberRows);
+    if (this.read * this.headers.length > cells)
+      throw importErrors.tooManyRows('members', Math.floor(cells / this.headers.length));
+  }
+
+  row(given: string[], line: number): void {
+    const cells = cellsThatFit(given, this.headers.length);
+    if (typeof cells === 'string') return this.broken(line, given.join(' | '), cells);
+    this.count();
+    const refuse = (column: string, value: string, reason: string): void => {
       this.refused++;
       this.problems.add('members', line, column, value, reason);
     };
-    if (cells.length !== this.headers.length)
-      return refuse(
-        null,
-        cells.join(' | '),
-        `This row has ${cells.length} cells; the header has ${this.headers.length}.`,
-      );
     const raw = cells[this.idIndex]!;
     const id = normaliseId(raw);
     const idColumn = this.headers[this.idIndex]!;
-    if (id === '') return refuse(idColumn, raw, 'The member id is blank.');
-    if (id.length > LIMITS.idLength)
-      return refuse(idColumn, raw, `The member id is longer than ${LIMITS.idLength} characters.`);
-    if (this.table.find(id) !== undefined)
+    const wrong = whyNotId(id, this.limits.idLength);
+    if (wrong) return refuse(idColumn, raw, wrong);
+    const long = this.wanted.find((one) => cells[one.index]!.length > this.limits.cellLength);
+    if (long)
+      return refuse(
+        long.column,
+        cells[long.index]!,
+        `This cell is longer than ${this.limits.cellLength} characters.`,
+      );
+    const known = this.table.find(id);
+    if (known !== undefined && this.seen.has(known))
       return refuse(idColumn, raw, 'This member stands in an earlier row already.');
     if (raw !== raw.trim()) this.table.spaced++;
-    this.table.place(id);
-    const name = this.nameIndex < 0 ? '' : cells[this.nameIndex]!.trim();
-    this.names.push(name === '' ? null : name.slice(0, 200));
+    const place = this.table.place(id);
+    this.seen.add(place);
+    this.placeOfRow.push(place);
+    this.names.push(this.nameOf(cells));
     this.lines.push(line);
-    this.cells.push(this.wanted.map((one) => cells[one.index]!));
+    this.wanted.forEach((one, i) => this.cells[i]!.push(cells[one.index]!));
+  }
+
+  private nameOf(cells: readonly string[]): string | null {
+    const name = this.nameIndex < 0 ? '' : cells[this.nameIndex]!.trim();
+    if (name.length > this.limits.labelLength) this.cutNames++;
+    return name === '' ? null : storable(name.slice(0, this.limits.labelLength));
   }
 
   get kept(): number {
-    return this.cells.length;
+    return this.placeOfRow.length;
   }
 
-  /** Decides the type of each column and reads its values. Cells that do not fit are refused one by one. */
+  /** Places of the rows that were kept, in the order of the file. */
+  get places(): Int32Array {
+    return this.placeOfRow.view();
+  }
+
+  /**
+   * Decides the type of each column and reads its values, one a kept row. Cells that do not fit are refused one by
+   * one. Frees the cells: call it once.
+   */
   finish(): AttributeColumn[] {
-    return this.wanted.map((wanted, column) => this.attribute(wanted, column)).filter((one) => one !== null);
+    if (this.cutNames > 0)
+      this.notes.push(`${this.cutNames} names were cut after ${this.limits.labelLength} characters.`);
+    const columns: AttributeColumn[] = [];
+    const lines = this.lines.view();
+    for (const [i, wanted] of this.wanted.entries()) {
+      const cells = this.cells[i]!;
+      this.cells[i] = [];
+      const column = this.finishColumn({ wanted, cells, lines });
+      if (column) columns.push(column);
+    }
+    return columns;
   }
 
-  private attribute(wanted: Wanted, column: number): AttributeColumn | null {
-    const cells = this.cells.map((row) => row[column]!.trim());
-    const filled = cells.filter((cell) => cell !== '');
-    this.blankCells += cells.length - filled.length;
-    if (filled.length === 0) {
-      this.notes.push(`“${wanted.name}” is blank for everyone and was left out.`);
-      return null;
-    }
-    const commas = filled.filter(
-      (cell) => Number.isNaN(parseNumber(cell)) && !Number.isNaN(parseNumber(cell, true)),
-    ).length;
-    const decimalComma = commas > 0 && commas >= filled.filter((cell) => cell.includes('.')).length;
-    const values = Float64Array.from(cells, (cell) => (cell === '' ? NaN : parseNumber(cell, decimalComma)));
-    const bad = filled.length - values.reduce((sum, value) => sum + (Number.isNaN(value) ? 0 : 1), 0);
-    const type = wanted.type ?? (bad / filled.length > LABEL_SHARE ? 'label' : 'number');
-    const common = {
-      name: wanted.name,
-      direction: wanted.direction,
-      sensitive: wanted.sensitive,
-      countOf: wanted.countColumn ?? null,
-    };
-    if (type === 'label')
-      return {
-        ...common,
-        type,
-        values: new Float64Array(),
-        labels: cells.map((cell) => (cell === '' ? null : cell.slice(0, 200))),
-      };
-    cells.forEach((cell, i) => {
-      if (cell === '' || !Number.isNaN(values[i]!)) return;
-      this.refusedCells++;
-      this.problems.add(
-        'members',
-        this.lines[i]!,
-        wanted.column,
-        cell,
-        `${whyNotNumber(cell)} The cell was left blank.`,
-      );
-    });
-    if (decimalComma) this.notes.push(`“${wanted.name}” was read with decimal commas.`);
-    return { ...common, type, values, labels: null };
+  private finishColumn({ wanted, cells, lines }: ColumnCells & { wanted: Wanted }): AttributeColumn | null {
+    const { decimal, dates } = this.options.reading.members ?? {};
+    const built = buildAttribute(
+      { wanted, cells, lines },
+      { decimal, dates, takenOn: this.takenOn, longest: this.limits.labelLength },
+      (line, cell, reason) => {
+        this.refusedCells++;
+        this.problems.add('members', line, wanted.column, cell, reason);
+      },
+    );
+    this.blankCells += built.blank;
+    this.notes.push(...built.notes);
+    return built.column && { ...built.column, countOf: wanted.countOf };
   }
 }

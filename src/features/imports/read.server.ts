@@ -1,10 +1,18 @@
+import { Op } from 'sequelize';
 import type { Actor } from '@/lib/actor';
 import { csvLine } from '@/lib/csv';
 import { conflict, notFound } from '@/lib/problem';
 import { Import, ImportProblem as ProblemRow, Job, sequelize, Snapshot } from '@/server/models';
-import { communityFor } from '@/features/network/index.server';
+import { communityFor, settleIds } from '@/features/network/index.server';
 import { authorise, audit, workspaceIds } from '@/features/workspaces/index.server';
-import type { ImportCounts, ImportView, ImportWarning } from './imports';
+import type {
+  FileRole,
+  ImportCounts,
+  ImportProblem,
+  ImportView,
+  ImportWarning,
+  ProblemKind,
+} from './imports';
 
 const FIRST = 100;
 
@@ -22,13 +30,14 @@ export async function presentImport(row: Import): Promise<ImportView> {
     counts: row.counts as ImportCounts | null,
     warnings: (row.warnings ?? []) as unknown as ImportWarning[],
     problems: problems.map(({ file, line, column, value, reason }) => ({
-      file: file as 'ties' | 'members',
+      file: file as FileRole,
       line,
       column,
       value,
       reason,
     })),
     problemsTotal: row.problemsTotal,
+    problemKinds: (row.problemKinds ?? []) as unknown as ProblemKind[],
     snapshotId: row.snapshotId,
     jobId: job?.id ?? null,
     createdAt: row.createdAt.toISOString(),
@@ -60,6 +69,8 @@ export async function acceptImport(actor: Actor, id: string): Promise<ImportView
     );
     if (count === 0) throw conflict('not-in-review', 'This import is not waiting for review.');
     await Snapshot.update({ state: 'ready' }, { where: { importId: id }, transaction });
+    const { mappingRows } = (row.counts ?? {}) as Partial<ImportCounts>;
+    if (mappingRows && row.snapshotId) await settleIds(row.snapshotId, transaction);
     await audit(
       {
         workspaceId: row.workspaceId,
@@ -96,6 +107,30 @@ export async function discardImport(actor: Actor, id: string): Promise<ImportVie
     );
   });
   return presentImport((await Import.findByPk(id))!);
+}
+
+/** A page of the refused rows of one kind. */
+export async function problemPage(
+  actor: Actor,
+  id: string,
+  { kind, limit, cursor }: { kind: number; limit: number; cursor: number },
+): Promise<{ items: ImportProblem[]; nextCursor: string | null }> {
+  await importFor(actor, id);
+  const rows = await ProblemRow.findAll({
+    where: { importId: id, kind, ordinal: { [Op.gte]: cursor } },
+    order: [['ordinal', 'ASC']],
+    limit: limit + 1,
+  });
+  return {
+    items: rows.slice(0, limit).map(({ file, line, column, value, reason }) => ({
+      file: file as FileRole,
+      line,
+      column: column ?? null,
+      value: value ?? null,
+      reason,
+    })),
+    nextCursor: rows.length > limit ? String(rows[limit]!.ordinal) : null,
+  };
 }
 
 const CHUNK = 5_000;

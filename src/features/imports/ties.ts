@@ -1,32 +1,12 @@
+import type { RowSink } from '@/features/files';
+import { cellsThatFit } from './cells';
 import { importErrors } from './errors';
+import { float64, Growing, int32, uint16 } from './growing';
 import { guessTieColumns } from './guess';
-import { LIMITS, type ImportOptions } from './imports';
-import type { IdTable } from './members';
-import { normaliseId, parseNumber, parseTime, whyNotNumber } from './numbers';
-import type { Problems } from './problems';
-
-/** A typed array that grows by doubling. */
-class Growing<T extends Int32Array | Float64Array | Uint16Array> {
-  length = 0;
-  constructor(
-    private array: T,
-    private readonly make: (size: number) => T,
-  ) {}
-  push(value: number): void {
-    if (this.length === this.array.length) {
-      const next = this.make(this.array.length * 2);
-      next.set(this.array as never);
-      this.array = next;
-    }
-    this.array[this.length++] = value;
-  }
-  view(): T {
-    return this.array.subarray(0, this.length) as T;
-  }
-}
-const int32 = (size: number): Int32Array => new Int32Array(size);
-const float64 = (size: number): Float64Array => new Float64Array(size);
-const uint16 = (size: number): Uint16Array => new Uint16Array(size);
+import type { IdTable } from './id-table';
+import type { ImportLimits, ImportOptions } from './imports';
+import { isAmbiguous, normaliseId, parseCell, parseTime, whyNotId, whyNotNumber } from './numbers';
+import { storable, type Problems } from './problems';
 
 /** Rows of a ties file that are well formed: places of both members, weight, kind. */
 export interface TieRows {
@@ -42,7 +22,7 @@ const DAY = 86_400_000;
 const MOST_KINDS = 1_000;
 
 /** Takes the rows of a ties file and keeps those that are ties. */
-export class TiesReader {
+export class TiesReader implements RowSink {
   read = 0;
   refused = 0;
   selfTies = 0;
@@ -55,18 +35,21 @@ export class TiesReader {
   private readonly kinds: string[] = [];
   private readonly placeOfKind = new Map<string, number>();
   private readonly now: number;
+  /** Weights that were read with a decimal comma that nobody had set. */
+  commas = 0;
 
   constructor(
     private readonly table: IdTable,
     private readonly options: ImportOptions,
     private readonly problems: Problems,
     takenOn: string,
+    private readonly limits: ImportLimits,
   ) {
     this.now = Date.parse(`${takenOn}T00:00:00Z`);
   }
 
   header(headers: string[]): void {
-    if (headers.length > LIMITS.columns) throw importErrors.tooManyColumns('ties', LIMITS.columns);
+    if (headers.length > this.limits.columns) throw importErrors.tooManyColumns('ties', this.limits.columns);
     this.headers = headers;
     const guess = guessTieColumns(headers);
     const asked = this.options.ties;
@@ -91,33 +74,40 @@ export class TiesReader {
       throw importErrors.noColumn('ties', 'the time, which a half-life needs', headers);
   }
 
-  row(cells: string[], line: number): void {
-    if (++this.read > LIMITS.tieRows) throw importErrors.tooManyRows('ties', LIMITS.tieRows);
+  broken(line: number, value: string, reason: string): void {
+    this.count();
+    this.refused++;
+    this.problems.add('ties', line, null, value, reason);
+  }
+
+  private count(): void {
+    if (++this.read > this.limits.tieRows) throw importErrors.tooManyRows('ties', this.limits.tieRows);
+  }
+
+  row(given: string[], line: number): void {
+    const cells = cellsThatFit(given, this.headers.length);
+    if (typeof cells === 'string') return this.broken(line, given.join(' | '), cells);
+    this.count();
     const refuse = (at: number, reason: string): void => {
       this.refused++;
-      const cell = at < 0 ? cells.join(' | ') : cells[at]!;
-      this.problems.add('ties', line, at < 0 ? null : this.headers[at]!, cell, reason);
+      this.problems.add('ties', line, this.headers[at]!, cells[at]!, reason);
     };
-    if (cells.length !== this.headers.length)
-      return refuse(-1, `This row has ${cells.length} cells; the header has ${this.headers.length}.`);
     const { at } = this;
-    const ends: string[] = [];
-    for (const end of [at.source, at.target]) {
-      const id = normaliseId(cells[end]!);
-      if (id === '') return refuse(end, 'The member id is blank.');
-      if (id.length > LIMITS.idLength)
-        return refuse(end, `The member id is longer than ${LIMITS.idLength} characters.`);
-      ends.push(id);
-    }
+    const source = normaliseId(cells[at.source]!);
+    const target = normaliseId(cells[at.target]!);
+    const sourceWrong = whyNotId(source, this.limits.idLength);
+    if (sourceWrong) return refuse(at.source, sourceWrong);
+    const targetWrong = whyNotId(target, this.limits.idLength);
+    if (targetWrong) return refuse(at.target, targetWrong);
     const weight = this.weightOf(cells, refuse);
     if (weight === null) return;
-    if (ends[0] === ends[1]) {
+    if (source === target) {
       this.selfTies++;
       return;
     }
     for (const end of [at.source, at.target]) if (cells[end] !== cells[end]!.trim()) this.table.spaced++;
-    this.sources.push(this.table.place(ends[0]!));
-    this.targets.push(this.table.place(ends[1]!));
+    this.sources.push(this.table.place(source));
+    this.targets.push(this.table.place(target));
     this.weights.push(weight);
     this.kindOf.push(at.kind < 0 ? 0 : this.kind(cells[at.kind]!.trim()));
   }
@@ -129,14 +119,17 @@ export class TiesReader {
     if (at >= 0) {
       const cell = cells[at]!;
       if (cell.trim() === '') return (refuse(at, 'The weight is blank.'), null);
-      weight = parseNumber(cell, true);
-      if (Number.isNaN(weight)) return (refuse(at, whyNotNumber(cell)), null);
+      const { decimal } = this.options.reading.ties ?? {};
+      weight = parseCell(cell, decimal);
+      if (Number.isNaN(weight)) return (refuse(at, whyNotNumber(cell, decimal)), null);
+      if (decimal === undefined && cell.includes(',') && !isAmbiguous(cell)) this.commas++;
       if (weight < 0) return (refuse(at, 'Weights cannot be negative.'), null);
       if (weight === 0) return (refuse(at, 'A tie of weight 0 is no tie.'), null);
     }
     if (this.options.halfLifeDays === null) return weight;
-    const when = parseTime(cells[time]!);
-    if (Number.isNaN(when)) return (refuse(time, 'This is not a date such as 2026-11-28.'), null);
+    const when = parseTime(cells[time]!, this.options.reading.ties?.dates);
+    if (Number.isNaN(when))
+      return (refuse(time, 'This is not a date such as 2026-11-28, or the form of dates is not set.'), null);
     const age = Math.max(0, (this.now - when) / DAY);
     return weight * 0.5 ** (age / this.options.halfLifeDays);
   }
@@ -146,7 +139,7 @@ export class TiesReader {
     const known = this.placeOfKind.get(text);
     if (known !== undefined) return known;
     if (this.kinds.length >= MOST_KINDS) return 0;
-    this.kinds.push(text.slice(0, 60));
+    this.kinds.push(storable(text).slice(0, 60));
     this.placeOfKind.set(text, this.kinds.length);
     return this.kinds.length;
   }

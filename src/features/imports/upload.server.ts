@@ -6,8 +6,10 @@ import { validate } from '@/server/http';
 import { deleteObject, putObject } from '@/server/storage';
 import { newId, type ImportFile } from '@/server/models';
 import { ProblemError } from '@/lib/problem';
+import { fileErrors } from '@/features/files';
 import { importErrors } from './errors';
-import { importOptionsSchema, LIMITS, type ImportOptions } from './imports';
+import { importOptionsSchema, ROLES, type ImportOptions } from './imports';
+import { importLimits } from './limits.server';
 
 export interface Upload {
   readonly importId: string;
@@ -18,7 +20,6 @@ export interface Upload {
 }
 
 const OPTIONS_BYTES = 65_536;
-const ROLES = ['ties', 'members'] as const;
 
 /** Streams one part to storage while counting and hashing it. */
 async function storePart(
@@ -63,6 +64,7 @@ export async function receiveUpload(request: Request): Promise<Upload> {
   const type = request.headers.get('content-type') ?? '';
   if (!/^multipart\/form-data/i.test(type) || !request.body) throw importErrors.notMultipart();
   const importId = newId();
+  const limits = importLimits();
   const stored: Promise<ImportFile>[] = [];
   const roles = new Set<string>();
   let optionsText: string | null = null;
@@ -71,7 +73,7 @@ export async function receiveUpload(request: Request): Promise<Upload> {
   try {
     const parser = busboy({
       headers: { 'content-type': type },
-      limits: { fileSize: LIMITS.fileBytes, files: 3, fields: 5, fieldSize: OPTIONS_BYTES },
+      limits: { fileSize: limits.fileBytes, files: 4, fields: 5, fieldSize: OPTIONS_BYTES },
     });
     await new Promise<void>((resolve, reject) => {
       parser.on('file', (part, stream, info) => {
@@ -84,7 +86,7 @@ export async function receiveUpload(request: Request): Promise<Upload> {
         }
         roles.add(role);
         stream.on('limit', () => {
-          problem ??= importErrors.tooLarge('512 MB');
+          problem ??= fileErrors.tooLarge(`${Math.floor(limits.fileBytes / 1024 / 1024)} MB`);
         });
         const file = storePart(stream, role, info.filename || `${role}.csv`, importId);
         // Awaited below; until then a failure must not count as unhandled.
@@ -93,7 +95,7 @@ export async function receiveUpload(request: Request): Promise<Upload> {
       });
       parser.on('field', (name, value, info) => {
         if (name !== 'options') problem ??= importErrors.unknownPart(name);
-        else if (info.valueTruncated) problem ??= importErrors.tooLarge('64 KB of options');
+        else if (info.valueTruncated) problem ??= fileErrors.tooLarge('64 KB of options');
         else optionsText = value;
       });
 

@@ -7,3 +7,5 @@ export { communityFor, snapshotFor } from './scope.server';
 export { createCommunity, listCommunities, listSnapshots, presentSnapshot } from './snapshots.server';
 export { spectrumOf } from './spectrum.server';
 export { tiesCsv } from './ties.server';
+export { settleIds } from './member-ids.server';
+export { wholeSnapshot, type WholeSnapshot } from './whole.server';

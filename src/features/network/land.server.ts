@@ -1,7 +1,9 @@
-import { QueryTypes, type Transaction } from 'sequelize';
-import { Attribute, newId, sequelize, Snapshot } from '@/server/models';
+import type { Transaction } from 'sequelize';
+import { Attribute, sequelize, Snapshot } from '@/server/models';
 import { saveArray } from './arrays.server';
+import { chunks, slice } from './chunks';
 import type { Shape } from './compute';
+import { memberIds } from './member-ids.server';
 import { savePicture } from './picture.server';
 import { summarise } from './summary';
 
@@ -15,6 +17,8 @@ export interface Landing {
   readonly label: string;
   readonly state: 'pending' | 'ready';
   readonly ids: readonly string[];
+  /** What a member was called before, by present id; members without a change are not in it. */
+  readonly formerOf: ReadonlyMap<string, string>;
   readonly names: readonly (string | null)[];
   readonly shape: Shape;
   /** Distinct ties, source < target. */
@@ -23,7 +27,7 @@ export interface Landing {
     targets: Int32Array;
     weights: Float64Array;
     counts: Int32Array;
-    kinds: (tie: number) => string | null;
+    kinds: readonly (string | null)[];
   };
   readonly attributes: readonly {
     name: string;
@@ -36,37 +40,7 @@ export interface Landing {
   }[];
 }
 
-const CHUNK = 10_000;
 type Report = (done: number, step: string) => void;
-
-/** Slices of at most CHUNK places. */
-function* chunks(length: number): Generator<{ from: number; count: number }> {
-  for (let from = 0; from < length; from += CHUNK) yield { from, count: Math.min(CHUNK, length - from) };
-}
-const slice = <T>(from: number, count: number, value: (index: number) => T): T[] =>
-  Array.from({ length: count }, (_, i) => value(from + i));
-
-/** Ids of members by external id: known ones keep theirs, new ones get one. */
-async function memberIds(landing: Landing, transaction: Transaction): Promise<string[]> {
-  const { communityId, ids } = landing;
-  const result = new Array<string>(ids.length);
-  for (const { from, count } of chunks(ids.length)) {
-    const external = slice(from, count, (i) => ids[i]!);
-    await sequelize.query(
-      `INSERT INTO community_members (id, community_id, external_id)
-       SELECT id, $1, external_id FROM unnest($2::uuid[], $3::text[]) AS new(id, external_id)
-       ON CONFLICT (community_id, external_id) DO NOTHING`,
-      { bind: [communityId, external.map(() => newId()), external], transaction },
-    );
-    const rows = await sequelize.query<{ id: string; place: number }>(
-      `SELECT m.id, (asked.place - 1)::int AS place FROM unnest($2::text[]) WITH ORDINALITY AS asked(external_id, place)
-       JOIN community_members m ON m.community_id = $1 AND m.external_id = asked.external_id`,
-      { bind: [communityId, external], type: QueryTypes.SELECT, transaction },
-    );
-    for (const row of rows) result[from + row.place] = row.id;
-  }
-  return result;
-}
 
 async function saveMembers(landing: Landing, snapshotId: string, transaction: Transaction): Promise<void> {
   const { ids, names, shape } = landing;
@@ -112,7 +86,7 @@ async function saveTies(
           slice(from, count, (i) => ties.targets[i]!),
           slice(from, count, (i) => ties.weights[i]!),
           slice(from, count, (i) => ties.counts[i]!),
-          slice(from, count, (i) => ties.kinds(i)),
+          slice(from, count, (i) => ties.kinds[i]!),
         ],
         transaction,
       },

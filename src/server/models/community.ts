@@ -19,7 +19,7 @@ import {
 
 /** One uploaded file as kept in object storage. */
 export interface ImportFile {
-  role: 'ties' | 'members';
+  role: 'ties' | 'members' | 'mapping';
   name: string;
   key: string;
   bytes: number;
@@ -55,6 +55,7 @@ export class Import extends Model<InferAttributes<Import>, InferCreationAttribut
   declare counts: CreationOptional<Record<string, unknown> | null>;
   declare warnings: CreationOptional<Record<string, unknown>[] | null>;
   declare problemsTotal: CreationOptional<number>;
+  declare problemKinds: CreationOptional<Record<string, unknown>[] | null>;
   declare snapshotId: CreationOptional<string | null>;
   declare createdBy: CreationOptional<string | null>;
   declare createdAt: CreationOptional<Date>;
@@ -72,6 +73,7 @@ Import.init(
     counts: optionalJson,
     warnings: optionalJson,
     problemsTotal: { ...integer, defaultValue: 0 },
+    problemKinds: optionalJson,
     snapshotId: optionalReference,
     createdBy: optionalText,
     createdAt: time,
@@ -91,6 +93,7 @@ export class ImportProblem extends Model<
   declare column: CreationOptional<string | null>;
   declare value: CreationOptional<string | null>;
   declare reason: string;
+  declare kind: CreationOptional<number>;
 }
 ImportProblem.init(
   columns({
@@ -101,6 +104,7 @@ ImportProblem.init(
     column: optionalText,
     value: optionalText,
     reason: text,
+    kind: { ...integer, defaultValue: 0 },
   }),
   { sequelize, tableName: 'import_problems' },
 );

@@ -6,5 +6,6 @@ export * from './network';
 export * from './analysis';
 export * from './review';
 export * from './operations';
+export * from './recipe';
 export { newId } from './columns';
 export { sequelize } from '../database/connection';

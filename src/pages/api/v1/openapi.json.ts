@@ -2,7 +2,7 @@ import type { APIRoute } from 'astro';
 import { accountOperations } from '@/features/account';
 import { caseOperations } from '@/features/cases';
 import { groupingOperations } from '@/features/groupings';
-import { importOperations } from '@/features/imports';
+import { importOperations, recipeOperations } from '@/features/imports';
 import { jobOperations } from '@/features/jobs';
 import { memberOperations } from '@/features/members';
 import { networkOperations } from '@/features/network';
@@ -19,6 +19,7 @@ const OPERATIONS = [
   workspaceOperations,
   networkOperations,
   importOperations,
+  recipeOperations,
   memberOperations,
   groupingOperations,
   readingOperations,
